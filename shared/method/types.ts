@@ -1,0 +1,38 @@
+import type { CircuitsFile, Dataset, GateClass, Result, Seal } from '#shared/formats/types.ts';
+
+export interface EstimateInput {
+  /** A dataset that has passed the schema and the semantic checks. */
+  dataset: Dataset;
+  /** SHA-256 of the canonical form, hex: names the dataset in the result and seeds the bootstrap. */
+  contentId: string;
+  /** The class with its bench circuits; null for `custom` or an unknown class. */
+  gateClass: GateClass | null;
+  /** Opened seal: those circuits are kept out of the estimate. Null: every circuit is used. */
+  seal?: Seal | null;
+  /** Circuits whose outcomes are to be predicted. */
+  predict?: CircuitsFile | null;
+  /** Bootstrap replicates; 2,000 unless told. */
+  replicates?: number;
+  /** Called now and then with a stage and the share done, 0 to 1; the method's result never depends on it. */
+  onProgress?: (progress: EstimateProgress) => void;
+}
+
+export interface EstimateProgress {
+  stage: 'design' | 'inverse' | 'passes' | 'replicates' | 'figures';
+  fraction: number;
+  /** Replicates done so far, where that is the stage. */
+  replicatesDone?: number;
+}
+
+/** The companion `evenbeam.replicates`: one row a figure (in the order of result.figures), one column a replicate; NaN where the figure has none. */
+export interface ReplicateTable {
+  figures: number;
+  replicates: number;
+  /** Row-major, figures × replicates. Little-endian float64 when stored. */
+  values: Float64Array;
+}
+
+export interface EstimateOutput {
+  result: Result;
+  replicates: ReplicateTable;
+}
