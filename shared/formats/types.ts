@@ -76,8 +76,10 @@ export interface GateClass {
   /** Rank a sound joint design must have; for chained classes that of one pair patch (240 per entangling gate). */
   expectedRank: number;
   gates: GateDeclaration[];
-  /** Circuit lengths a run sheet draws from. */
+  /** Circuit lengths a run sheet draws from; for chained classes those of the pair patches. */
   lengths: number[];
+  /** Chained classes only: lengths of the one-qubit patches, which draw from every gate of their qubit. */
+  localLengths?: number[];
   /** Labels a run sheet draws from; for chained classes those of the pair patches. */
   drawing: string[];
   /** Conditions for ranking, not for validity: circuits to estimate from, shots of each. */
