@@ -1,0 +1,12 @@
+import { z } from 'zod';
+
+/** Queues by name with the payload each takes. The sender needs only this; handlers live in the worker. */
+export const queues = {
+  estimate: z.object({ submission: z.string() }),
+  'deliver-mail': z.object({}),
+  'house-keeping': z.object({}),
+} as const;
+
+export type QueueName = keyof typeof queues;
+export type Payload<N extends QueueName> = z.infer<(typeof queues)[N]>;
+export const queueNames = Object.keys(queues) as QueueName[];

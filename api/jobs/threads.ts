@@ -1,0 +1,44 @@
+import { MessageChannel } from 'node:worker_threads';
+import { availableParallelism } from 'node:os';
+import { Piscina } from 'piscina';
+import type { TaskInput, TaskName, TaskOutput } from './thread-tasks.ts';
+
+export interface ThreadProgress {
+  stage: string;
+  fraction: number;
+}
+
+export type RunInThread = <N extends TaskName>(name: N, input: TaskInput<N>, options?: { signal?: AbortSignal; onProgress?: (progress: ThreadProgress) => void }) => Promise<TaskOutput<N>>;
+
+export interface ThreadPool {
+  run: RunInThread;
+  stop(): Promise<void>;
+}
+
+/**
+ * A pool of worker threads for the tasks of thread-tasks.ts. From source the entry is TypeScript and goes through
+ * tsx; a bundle names its own entry file. Threads start when first needed and go after a minute idle.
+ */
+export const startThreads = (options: { threads?: number | undefined; file?: string | undefined } = {}): ThreadPool => {
+  const filename = options.file ?? new URL('./thread.ts', import.meta.url).href;
+  const pool = new Piscina({
+    filename,
+    ...(filename.endsWith('.ts') ? { execArgv: ['--import', 'tsx'] } : {}),
+    minThreads: 0,
+    maxThreads: options.threads ?? Math.max(1, availableParallelism() - 1),
+    idleTimeout: 60_000,
+  });
+  return {
+    run: async (name, input, { signal, onProgress } = {}) => {
+      const { port1, port2 } = new MessageChannel();
+      port1.on('message', (progress: ThreadProgress) => onProgress?.(progress));
+      port1.unref();
+      try {
+        return await pool.run({ name, input, port: port2 }, { transferList: [port2], ...(signal ? { signal } : {}) });
+      } finally {
+        port1.close();
+      }
+    },
+    stop: () => pool.destroy(),
+  };
+};

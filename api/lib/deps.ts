@@ -1,0 +1,17 @@
+import type { MikroORM } from '@mikro-orm/postgresql';
+import type pg from 'pg';
+import type { Logger } from 'pino';
+import type { Config } from '#api/config/config.ts';
+import type { Queue } from '#api/jobs/queue.ts';
+import type { Clock } from './clock.ts';
+
+/** What every part of the server is given; nothing reaches for a global. */
+export interface Deps {
+  config: Config;
+  orm: MikroORM;
+  /** Plain connections for the session table and LISTEN. */
+  pool: pg.Pool;
+  queue: Queue;
+  clock: Clock;
+  log: Logger;
+}

@@ -1,0 +1,5 @@
+import type { MigrationObject } from '@mikro-orm/core';
+import { Migration0001Base } from './0001-base.ts';
+
+/** Every migration in order, listed by hand so that a bundle needs no folder scan. A released one is never edited. */
+export const migrations: MigrationObject[] = [{ name: '0001-base', class: Migration0001Base }];
