@@ -1,0 +1,90 @@
+import { z } from 'zod';
+import { runSheetCreate } from '#shared/contracts/run-sheets.ts';
+import type { GateClassSummary } from '#shared/contracts/gate-classes.ts';
+
+/** What the fields of the plan hold: text as typed, so that a wrong value can be named back. */
+export interface PlanFields {
+  device: string;
+  gateClass: string;
+  register: string[];
+  circuits: string;
+  shots: string;
+  readoutError: string;
+  wanted: string;
+}
+
+/** A plan that can be forecast and drawn. */
+export interface Plan {
+  device: string;
+  gateClass: string;
+  register: string[];
+  circuits: number;
+  shots: number;
+  readoutError: number;
+  /** Half-width wanted of retained signal at depth 16; null = none named. */
+  wanted: number | null;
+}
+
+/** Digits as people type them: spaces of any kind between thousands are dropped. */
+const bare = (text: string): string => text.replace(/[\s\u00a0\u2009\u202f]/g, '');
+
+const wholeNumber = (noun: string, most: number) =>
+  z.string().transform((text, context) => {
+    const digits = bare(text);
+    const fault = (message: string) => { context.addIssue({ code: 'custom', message }); return z.NEVER; };
+    if (digits === '') return fault(`Give the number of ${noun}.`);
+    if (!/^\d+$/.test(digits)) return fault(`Give a whole number of ${noun}; ${text.trim()} is not one.`);
+    const value = Number(digits);
+    if (value > most) return fault(`${text.trim()} is above the ${noun} a sheet may have, ${most}.`);
+    return value;
+  });
+
+const decimal = (text: string): number | null => {
+  const digits = bare(text);
+  return /^(\d+\.?\d*|\.\d+)(e[+-]?\d+)?$/i.test(digits) ? Number(digits) : null;
+};
+
+const readoutError = z.string().transform((text, context) => {
+  const value = decimal(text);
+  if (value !== null && value < 0.5) return value;
+  context.addIssue({ code: 'custom', message: `Give a share from 0 to below 0.5; ${text.trim() || 'nothing'} is not one.` });
+  return z.NEVER;
+});
+
+const wantedWidth = z.string().transform((text, context) => {
+  if (bare(text) === '') return null;
+  const value = decimal(text);
+  if (value !== null && value > 0 && value < 1) return value;
+  context.addIssue({ code: 'custom', message: `Give a half-width between 0 and 1, such as 0.0030; ${text.trim()} is not one.` });
+  return z.NEVER;
+});
+
+const limits = runSheetCreate.shape;
+
+/** The plan's rules. Floors and the size of the register come from the gate class chosen. */
+export const planSchema = (classes: readonly GateClassSummary[]) =>
+  z.object({
+    device: z.string().min(1, 'Choose a device.'),
+    gateClass: z.string().refine((id) => classes.some((c) => c.id === id), { error: 'Choose a gate class.' }),
+    register: z.array(z.string().trim().max(40, 'A qubit name has at most 40 characters.')),
+    circuits: wholeNumber('circuits', limits.circuits.maxValue ?? 20_000),
+    shots: wholeNumber('shots', limits.shots.maxValue ?? 10_000_000),
+    readoutError,
+    wanted: wantedWidth,
+  }).superRefine((plan, context) => {
+    const gateClass = classes.find((c) => c.id === plan.gateClass);
+    if (!gateClass) return;
+    const fault = (path: (string | number)[], message: string) => context.addIssue({ code: 'custom', path, message });
+    if (plan.circuits < gateClass.floor.circuits) fault(['circuits'], belowFloor(plan.circuits, gateClass.floor.circuits));
+    if (plan.shots < gateClass.floor.shots) fault(['shots'], belowFloor(plan.shots, gateClass.floor.shots));
+    plan.register.forEach((name, i) => {
+      if (name === '') fault(['register', i], 'Name this qubit as your control software does.');
+      else if (plan.register.indexOf(name) < i) fault(['register', i], `${name} is named twice.`);
+    });
+  });
+
+export const belowFloor = (value: number, floor: number): string => `${value} is below the floor of ${floor} for this gate class.`;
+
+/** The register cut or filled to the size of the class; names already given are kept. */
+export const resizedRegister = (register: readonly string[], size: number): string[] =>
+  Array.from({ length: size }, (_, i) => register[i] ?? '');
