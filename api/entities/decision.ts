@@ -12,7 +12,7 @@ export const Decision = defineEntity({
     id: uuidKey(),
     submissionId: p.string(),
     round: p.integer(),
-    outcome: p.enum(decisionOutcomes),
+    outcome: p.string().$type<(typeof decisionOutcomes)[number]>(),
     reason: p.text(),
     curator: () => p.manyToOne(User).ref(),
     at: instant(),

@@ -14,7 +14,7 @@ export const Device = defineEntity({
     id: p.string().primary(),
     organisation: () => p.manyToOne(Organisation).ref(),
     name: p.string(),
-    modality: p.enum(modalities),
+    modality: p.string().$type<(typeof modalities)[number]>(),
     createdBy: () => p.manyToOne(User).ref().nullable(),
     createdAt: instant(),
   },

@@ -1,5 +1,5 @@
 import { defineEntity, p, type InferEntity } from '@mikro-orm/core';
-import { entryStates } from '#shared/domain/life-cycle.ts';
+import type { EntryState } from '#shared/domain/life-cycle.ts';
 import { instant } from './columns.ts';
 
 /** A state that a version of an entry came into; the newest row holds. Append-only. */
@@ -10,7 +10,7 @@ export const EntryStateRow = defineEntity({
     id: p.bigint('string').primary().autoincrement(),
     accession: p.string(),
     version: p.integer(),
-    state: p.enum(entryStates),
+    state: p.string().$type<EntryState>(),
     at: instant(),
     reason: p.text().nullable(),
     byId: p.uuid().nullable(),

@@ -19,7 +19,7 @@ export const RunSheet = defineEntity({
     register: p.json<string[]>(),
     circuitsAsked: p.integer(),
     shots: p.integer(),
-    state: p.enum(runSheetStates),
+    state: p.string().$type<(typeof runSheetStates)[number]>(),
     progress: p.double().default(0),
     message: p.text().nullable(),
     createdBy: () => p.manyToOne(User).ref(),

@@ -10,7 +10,7 @@ export const SubmissionMessage = defineEntity({
   properties: {
     id: uuidKey(),
     submissionId: p.string(),
-    role: p.enum(messageRoles),
+    role: p.string().$type<(typeof messageRoles)[number]>(),
     authorId: p.uuid().nullable(),
     authorName: p.string(),
     organisationName: p.string().nullable(),

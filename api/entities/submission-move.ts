@@ -1,5 +1,5 @@
 import { defineEntity, p, type InferEntity } from '@mikro-orm/core';
-import { submissionStates } from '#shared/domain/life-cycle.ts';
+import type { SubmissionState } from '#shared/domain/life-cycle.ts';
 import { instant } from './columns.ts';
 
 /** One move in a submission's life. Append-only. */
@@ -10,7 +10,7 @@ export const SubmissionMove = defineEntity({
     id: p.bigint('string').primary().autoincrement(),
     submissionId: p.string(),
     move: p.string(),
-    state: p.enum(submissionStates),
+    state: p.string().$type<SubmissionState>(),
     at: instant(),
     /** Who moved it, as a person reads it; null for the registry itself. */
     byName: p.string().nullable(),

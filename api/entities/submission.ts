@@ -1,6 +1,6 @@
 import { defineEntity, p, type InferEntity } from '@mikro-orm/core';
 import type { Check } from '#shared/contracts/common.ts';
-import { submissionStates } from '#shared/domain/life-cycle.ts';
+import type { SubmissionState } from '#shared/domain/life-cycle.ts';
 import { instant } from './columns.ts';
 import { Device } from './device.ts';
 import { Organisation } from './organisation.ts';
@@ -19,7 +19,7 @@ export const Submission = defineEntity({
     runSheet: () => p.manyToOne(RunSheet).ref().nullable(),
     /** Accession of the entry that this dataset corrects. */
     correctionOf: p.string().nullable(),
-    state: p.enum(submissionStates),
+    state: p.string().$type<SubmissionState>(),
     /** 1 for the first file, one more with every replacement. */
     round: p.integer(),
     title: p.string(),

@@ -2,7 +2,9 @@ import { z } from 'zod';
 
 /** Queues by name with the payload each takes. The sender needs only this; handlers live in the worker. */
 export const queues = {
-  estimate: z.object({ submission: z.string() }),
+  estimate: z.object({ submission: z.string(), round: z.number().int().min(1) }),
+  'draw-sheet': z.object({ runSheet: z.string() }),
+  'lift-embargoes': z.object({}),
   'deliver-mail': z.object({}),
   'house-keeping': z.object({}),
 } as const;
