@@ -1,0 +1,29 @@
+import type { QueryClient } from '@tanstack/react-query';
+import type { RouteObject } from 'react-router-dom';
+import { AppShell } from './layout/app-shell.tsx';
+import { RouteFault } from './route-fault.tsx';
+import { lazyRoute, type RouteModule } from './lazy-route.ts';
+import { deskRoutes } from './desk-routes.tsx';
+
+/** Every page of the site. Pages behind sign-in are listed in desk-routes.tsx. */
+export const routesOf = (queryClient: QueryClient): RouteObject[] => {
+  const page = (load: () => Promise<RouteModule>) => lazyRoute(queryClient, load);
+  return [
+    {
+      path: '/',
+      element: <AppShell />,
+      errorElement: <AppShell><RouteFault /></AppShell>,
+      hydrateFallbackElement: <></>,
+      children: [
+        {
+          errorElement: <RouteFault />,
+          children: [
+            { index: true, lazy: page(() => import('./routes/home.tsx')) },
+            ...deskRoutes(page),
+            { path: '*', lazy: page(() => import('./routes/not-found.tsx')) },
+          ],
+        },
+      ],
+    },
+  ];
+};
