@@ -1,0 +1,6 @@
+import { dayOf, momentOf } from '#web/lib/dates.ts';
+
+/** A day of the record; the exact moment is in its `datetime` and, with `exact`, on screen. */
+export function When({ at, exact = false }: { at: string; exact?: boolean }) {
+  return <time dateTime={at} className="nowrap">{exact ? momentOf(at) : dayOf(at)}</time>;
+}
