@@ -1,6 +1,6 @@
 import PgBoss from 'pg-boss';
 import { queueNames } from './queue-names.ts';
-import { queueDefaults } from './queue-defaults.ts';
+import { queueOptions } from './queue-defaults.ts';
 
 /** Makes the queue tables and the queues themselves, in the schema that the application role owns. Safe to repeat. */
 export const prepareQueues = async (applicationUrl: string): Promise<void> => {
@@ -9,7 +9,7 @@ export const prepareQueues = async (applicationUrl: string): Promise<void> => {
   await boss.start();
   try {
     for (const name of queueNames) {
-      const options = { name, policy: 'standard' as const, ...queueDefaults };
+      const options = { name, policy: 'standard' as const, ...queueOptions(name) };
       if (await boss.getQueue(name)) await boss.updateQueue(name, options);
       else await boss.createQueue(name, options);
     }

@@ -3,6 +3,7 @@ import type pg from 'pg';
 import type { Logger } from 'pino';
 import type { Config } from '#api/config/config.ts';
 import type { Queue } from '#api/jobs/queue.ts';
+import type { ThreadPool } from '#api/jobs/threads.ts';
 import type { Clock } from './clock.ts';
 
 /** What every part of the server is given; nothing reaches for a global. */
@@ -12,6 +13,8 @@ export interface Deps {
   /** Plain connections for the session table and LISTEN. */
   pool: pg.Pool;
   queue: Queue;
+  /** Worker threads for what would hold up the process: reading, checking, estimating. */
+  threads: ThreadPool;
   clock: Clock;
   log: Logger;
 }

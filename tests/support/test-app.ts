@@ -6,6 +6,7 @@ import { createApp } from '#api/app.ts';
 import { configFrom, type Config } from '#api/config/config.ts';
 import { startQueue } from '#api/jobs/queue.ts';
 import { SettableClock } from '#api/lib/clock.ts';
+import { startThreads } from '#api/jobs/threads.ts';
 import type { Deps } from '#api/lib/deps.ts';
 import type { Route } from '#api/lib/define-route.ts';
 import { createTestDatabase, dropTestDatabase, type TestDatabase } from './test-database.ts';
@@ -47,11 +48,12 @@ export const useTestApp = (options: { settings?: Record<string, string>; routes?
     pool = new pg.Pool({ connectionString: database.url, max: 2 });
     const clock = new SettableClock(testStart);
     const queue = await startQueue(database.url, () => undefined);
-    const deps: Deps = { config, orm: database.orm, pool, queue, clock, log: pino({ level: 'silent' }) };
+    const deps: Deps = { config, orm: database.orm, pool, queue, threads: startThreads({ threads: 1 }), clock, log: pino({ level: 'silent' }) };
     made = { app: createApp(deps, options.routes), deps, clock, database };
   });
   afterAll(async () => {
     await made?.deps.queue.stop();
+    await made?.deps.threads.stop();
     await pool?.end();
     if (made) await dropTestDatabase(made.database);
   });
