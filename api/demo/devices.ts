@@ -61,7 +61,7 @@ export const demoDevices: readonly DemoDevice[] = [
     firmware: [['2024-03-04', '2.0'], ['2025-07-07', '2.2']], shotsPerSecond: 3800, software: 'Meadow bench 3.1',
     profile: {
       angleScale: 0.007, tilt: 0.004, detuning: 0.004, flip: 3e-4, dephasing: 5e-4, damping: 0.0012, preparation: 0.002, zeroAsOne: 0.003, oneAsZero: 0.006,
-      leakage: { out: 0.006, back: 0.001 },
+      leakage: { out: 0.012, back: 0.002 },
     },
     change: { start: 1.2, period: 1, swing: 0.05 }, remark: 'leaks to a third level that reads out as 1: the misfit should show it',
   },
@@ -74,7 +74,7 @@ export const demoDevices: readonly DemoDevice[] = [
   {
     provider: 'Brackenholt Spin Works', name: 'Thistle-6', modality: 'spin', qubits: ['s6'], registers: oneQubit(0),
     firmware: [['2024-04-22', '3.0'], ['2025-10-06', '3.1']], shotsPerSecond: 700, software: 'Thistle lab 12',
-    profile: { angleScale: 0.004, tilt: 0.006, detuning: 0.006, flip: 4e-4, dephasing: 0.0016, damping: 2e-4, preparation: 0.003, zeroAsOne: 0.005, oneAsZero: 0.007, drift: 0.03 },
+    profile: { angleScale: 0.004, tilt: 0.006, detuning: 0.006, flip: 4e-4, dephasing: 0.0016, damping: 2e-4, preparation: 0.003, zeroAsOne: 0.005, oneAsZero: 0.007, drift: 0.018 },
     change: { start: 1.4, period: 0.9, swing: 0.06 }, remark: 'its rotation angle drifts during a run: the misfit and the blocks should show it',
   },
   {
