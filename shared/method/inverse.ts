@@ -1,0 +1,107 @@
+import { Cholesky } from '#shared/linalg/cholesky.ts';
+import { addGram, addRowProducts } from '#shared/linalg/gram.ts';
+import { largestEigenvalue } from '#shared/linalg/lanczos.ts';
+import { subtractPanel } from '#shared/linalg/panel.ts';
+import { multiplyFour, multiplyVector, toDense, transposeSparse, type SparseRows } from '#shared/linalg/sparse.ts';
+import { invertSvd, rankAt, singularValues } from '#shared/linalg/svd.ts';
+import { AMBIGUOUS_FROM, AMBIGUOUS_TO, FAST_PATH_FLOOR, GAUGE_RESIDUE, RANK_CUT } from '#shared/linalg/tolerances.ts';
+import type { Gauge } from '#shared/method/gauge.ts';
+
+/** What a design determines, and C⁺ as a thing that can be applied. */
+export interface Inverse {
+  rows: number;
+  columns: number;
+  rank: number;
+  rankAmbiguous: boolean;
+  /** σ_r/σ₁. */
+  conditionRatio: number;
+  /** All singular values, or [σ₁, σ_r] where no SVD was needed. */
+  spectrum: number[];
+  /** Orthonormal basis of the null space, vectors of length `columns` one after another. */
+  nullBasis: Float64Array;
+  nullDimension: number;
+  /**
+   * out = C⁺·x for `groups` groups of four vectors, interleaved: element i of vector l of group g at (g·rows + i)·4 + l,
+   * in `out` alike with `columns`. `out` is overwritten.
+   */
+  apply: (x: Float64Array, out: Float64Array, groups: number) => void;
+}
+
+/** Designs up to this many columns always get the SVD: it costs milliseconds and its whole spectrum is published. */
+const SVD_COLUMNS = 100;
+
+/** The Moore–Penrose inverse of the design (method M1, pseudo-inverse, rank, soundness). */
+export function invertDesign(design: SparseRows, gauge: Gauge): Inverse {
+  if (design.columns > SVD_COLUMNS) {
+    const fast = fastInverse(design, gauge);
+    if (fast) return fast;
+  }
+  return svdInverse(design);
+}
+
+/**
+ * C⁺ = (CᵀC + c·QQᵀ)⁻¹Cᵀ, exact when the gauge directions Q span the null space. Accepted only if ‖CQ‖ ≤ 1e-12 σ₁ (in the
+ * Frobenius norm, which is the larger), the Cholesky factor exists, and σ_r from inverse iteration is at least 1e-4 σ₁.
+ * Null = refused; a squared matrix must not decide a rank.
+ */
+export function fastInverse(design: SparseRows, gauge: Gauge): Inverse | null {
+  const { rows, columns } = design;
+  if (rows < columns - gauge.dimension) return null;
+  const transpose = transposeSparse(design);
+  const scratch = new Float64Array(rows);
+  const sigma1 = Math.sqrt(largestEigenvalue(columns, (x, y) => {
+    multiplyVector(design, x, scratch);
+    multiplyVector(transpose, scratch, y);
+  }));
+  let residue = 0;
+  for (let q = 0; q < gauge.dimension; q++) {
+    multiplyVector(design, gauge.basis.subarray(q * columns, (q + 1) * columns), scratch);
+    for (let i = 0; i < rows; i++) residue += scratch[i]! * scratch[i]!;
+  }
+  if (!(Math.sqrt(residue) <= GAUGE_RESIDUE * sigma1)) return null;
+  const gram = new Float64Array(columns * columns);
+  addGram(design, gram);
+  addRowProducts(transposeRows(gauge.basis, gauge.dimension, columns), columns, gauge.dimension, sigma1 * sigma1, gram);
+  const factor = Cholesky.factor(gram, columns);
+  if (!factor) return null;
+  const four = new Float64Array(4 * columns);
+  const sigmaR = 1 / Math.sqrt(largestEigenvalue(columns, (x, y) => {
+    for (let i = 0; i < columns; i++) four[4 * i] = x[i]!;
+    factor.solve(four, 1);
+    for (let i = 0; i < columns; i++) y[i] = four[4 * i]!;
+  }));
+  if (!(sigmaR >= FAST_PATH_FLOOR * sigma1)) return null;
+  return {
+    rows, columns, rank: columns - gauge.dimension, rankAmbiguous: false, conditionRatio: sigmaR / sigma1, spectrum: [sigma1, sigmaR],
+    nullBasis: gauge.basis, nullDimension: gauge.dimension,
+    apply: (x, out, groups) => {
+      for (let g = 0; g < groups; g++) multiplyFour(transpose, x, g * rows * 4, out, g * columns * 4);
+      factor.solve(out, groups);
+    },
+  };
+}
+
+function transposeRows(a: Float64Array, rows: number, columns: number): Float64Array {
+  const out = new Float64Array(a.length);
+  for (let i = 0; i < rows; i++) for (let j = 0; j < columns; j++) out[j * rows + i] = a[i * columns + j]!;
+  return out;
+}
+
+/** C⁺ from a singular value decomposition, singular values above RANK_CUT kept. */
+export function svdInverse(design: SparseRows): Inverse {
+  const { rows, columns } = design;
+  const svd = singularValues(toDense(design), rows, columns);
+  const rank = rankAt(svd.values, RANK_CUT);
+  const inverse = invertSvd(svd, rank, rows, columns);
+  const nullBasis = new Float64Array((columns - rank) * columns);
+  for (let k = rank; k < columns; k++) nullBasis.set(svd.right[k]!, (k - rank) * columns);
+  for (let i = 0; i < inverse.length; i++) inverse[i] = -inverse[i]!;
+  return {
+    rows, columns, rank, rankAmbiguous: rankAt(svd.values, AMBIGUOUS_FROM) !== rankAt(svd.values, AMBIGUOUS_TO),
+    conditionRatio: rank > 0 ? svd.values[rank - 1]! / svd.values[0]! : 0, spectrum: Array.from(svd.values), nullBasis, nullDimension: columns - rank,
+    apply: (x, out, groups) => {
+      out.fill(0, 0, groups * columns * 4);
+      for (let g = 0; g < groups; g++) subtractPanel(inverse, rows, 0, columns, 0, rows, x, g * rows * 4, out, g * columns * 4);
+    },
+  };
+}

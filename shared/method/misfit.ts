@@ -1,0 +1,71 @@
+import type { Misfit } from '#shared/formats/types.ts';
+import { multiplyFour } from '#shared/linalg/sparse.ts';
+import type { PatchProblem } from '#shared/method/patch-problem.ts';
+import { MultinomialTable } from '#shared/random/multinomial.ts';
+import type { Xoshiro256 } from '#shared/random/xoshiro256.ts';
+import { moments } from '#shared/stats/moments.ts';
+
+/**
+ * Misfit: S = Σ over circuits and all outcomes of (f − p̂)², unweighted, against a parametric bootstrap: f_b drawn from p̂
+ * clipped to at least ½/(N + d/2) and renormalised, residual (1 − CC⁺)(f_b − p̂) with the unclipped p̂.
+ * sigmas = (S − mean)/sd; p = min(1, 2·min(a + 1, B + 1 − a)/(B + 1)), a = draws with S_b ≥ S.
+ * High: drift, leakage, crosstalk. Low: less scatter than shot noise allows.
+ * @param predicted p̂ of the problem's circuits, circuits × d
+ */
+export function misfitOf(problem: PatchProblem, predicted: Float64Array, draws: number, generator: Xoshiro256): Misfit {
+  const { counts, design, inverse } = problem;
+  const { circuits, d, observed, shots } = counts;
+  let residualSum = 0;
+  for (let i = 0; i < observed.length; i++) residualSum += (observed[i]! - predicted[i]!) * (observed[i]! - predicted[i]!);
+  const table = new MultinomialTable(clipped(predicted, shots, d), shots, d);
+  const { rows, columns } = inverse;
+  const x = new Float64Array(4 * rows);
+  const y = new Float64Array(4 * columns);
+  const fitted = new Float64Array(4 * rows);
+  const sums = new Float64Array(draws);
+  for (let from = 0; from < draws; from += 4) {
+    const here = Math.min(4, draws - from);
+    x.fill(0);
+    for (let l = 0; l < here; l++) {
+      table.draw(generator, x, l, 4);
+      for (let c = 0; c < circuits; c++) for (let o = 0; o < d - 1; o++) x[4 * (c * (d - 1) + o) + l]! -= predicted[c * d + o]!;
+    }
+    inverse.apply(x, y, 1);
+    multiplyFour(design, y, 0, fitted, 0);
+    for (let l = 0; l < here; l++) {
+      let sum = 0;
+      for (let c = 0; c < circuits; c++) {
+        let last = 0;
+        for (let o = 0; o < d - 1; o++) {
+          const i = 4 * (c * (d - 1) + o) + l;
+          const r = x[i]! - fitted[i]!;
+          last -= r;
+          sum += r * r;
+        }
+        sum += last * last;
+      }
+      sums[from + l] = sum;
+    }
+  }
+  const { mean, deviation } = moments(sums);
+  let above = 0;
+  for (const s of sums) if (s >= residualSum) above++;
+  return {
+    residualSum, expected: mean, sigmas: deviation > 0 ? (residualSum - mean) / deviation : 0,
+    pValue: Math.min(1, (2 * Math.min(above + 1, draws + 1 - above)) / (draws + 1)),
+  };
+}
+
+function clipped(predicted: Float64Array, shots: Float64Array, d: number): Float64Array {
+  const out = new Float64Array(predicted.length);
+  for (let c = 0; c < shots.length; c++) {
+    const least = 0.5 / (shots[c]! + d / 2);
+    let sum = 0;
+    for (let o = 0; o < d; o++) {
+      out[c * d + o] = Math.max(least, predicted[c * d + o]!);
+      sum += out[c * d + o]!;
+    }
+    for (let o = 0; o < d; o++) out[c * d + o]! /= sum;
+  }
+  return out;
+}

@@ -1,0 +1,43 @@
+import { binomial } from '#shared/random/binomial.ts';
+import type { Xoshiro256 } from '#shared/random/xoshiro256.ts';
+
+/**
+ * Multinomial draws for a list of circuits: circuits in order, outcomes ascending, each outcome a binomial of the shots left
+ * with its probability among the outcomes left; the last takes the rest.
+ */
+export class MultinomialTable {
+  private readonly shots: Float64Array;
+  private readonly conditional: Float64Array;
+  private readonly outcomes: number;
+
+  /** @param probabilities circuits × outcomes, row-major, each row summing to 1, none negative */
+  constructor(probabilities: Float64Array, shots: Float64Array, outcomes: number) {
+    this.shots = shots;
+    this.outcomes = outcomes;
+    this.conditional = new Float64Array(probabilities.length);
+    for (let c = 0; c < shots.length; c++) {
+      let tail = 0;
+      for (let o = outcomes - 1; o >= 0; o--) {
+        const p = probabilities[c * outcomes + o]!;
+        tail += p;
+        this.conditional[c * outcomes + o] = tail > 0 ? p / tail : 0;
+      }
+    }
+  }
+
+  /** One replicate: the frequency of row (circuit, outcome < last) goes to out[at + stride·row]. */
+  draw(generator: Xoshiro256, out: Float64Array, at: number, stride: number): void {
+    const last = this.outcomes - 1;
+    let place = at;
+    for (let c = 0; c < this.shots.length; c++) {
+      const shots = this.shots[c]!;
+      let left = shots;
+      for (let o = 0; o < last; o++) {
+        const k = binomial(generator, left, this.conditional[c * this.outcomes + o]!);
+        left -= k;
+        out[place] = k / shots;
+        place += stride;
+      }
+    }
+  }
+}

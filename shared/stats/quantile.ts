@@ -1,0 +1,12 @@
+/**
+ * Quantile of type 7: linear interpolation at (n − 1)q of the ordered sample ("Sample quantiles in statistical packages",
+ * The American Statistician 50, 361, 1996).
+ * @param sorted ascending, not empty
+ */
+export function quantileSorted(sorted: ArrayLike<number>, q: number): number {
+  const h = (sorted.length - 1) * q;
+  const below = Math.floor(h);
+  const low = sorted[below]!;
+  const high = sorted[Math.min(below + 1, sorted.length - 1)]!;
+  return low + (h - below) * (high - low);
+}
