@@ -11,7 +11,7 @@ describe('the sentences over a case', () => {
   it('say so when a check failed, the sealed check failed and no block drifts', () => {
     const { submission } = claimed;
     const worse = { submission: { checks: submission.checks.map((c, i) => (i === 5 ? { ...c, status: 'failed' as const } : c)), result: submission.result && { ...submission.result, sealedCheck: submission.result.sealedCheck && { ...submission.result.sealedCheck, passed: false } } }, drift: claimed.drift.slice(0, 3) };
-    expect(openingWords(worse)).toBe('One check of 9 failed, with two notes. The sealed circuits are not predicted within chance. None of three blocks lies outside the expected range.');
+    expect(openingWords(worse)).toBe('One check of nine failed, with two notes. The sealed circuits are not predicted within chance. None of three blocks lies outside the expected range.');
   });
 });
 

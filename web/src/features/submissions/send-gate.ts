@@ -1,5 +1,5 @@
 import type { Submission } from '#shared/contracts/submissions.ts';
-import { countWords } from '#web/lib/count-words.ts';
+import { capitalise, countInWords, plural } from '#shared/domain/format.ts';
 
 type Sendable = Pick<Submission, 'state' | 'checks' | 'record' | 'recordComplete' | 'may'>;
 
@@ -13,8 +13,8 @@ export const closedReason = ({ state, checks, record, recordComplete, may }: Sen
   const failed = checks.filter((c) => c.status === 'failed' && c.blocking);
   switch (state) {
     case 'draft':
-    case 'checking': return ahead === 0 ? 'The checks have not begun.' : `${countWords(ahead, 'check is', 'checks are')} still to come.`;
-    case 'blocked': return failed.length === 0 ? 'A check failed; send a new file.' : `${countWords(failed.length, 'check', 'checks')} failed: ${failed.map((c) => c.title).join('; ')}. Send a new file.`;
+    case 'checking': return ahead === 0 ? 'The checks have not begun.' : `${capitalise(countInWords(ahead))} ${plural(ahead, 'check is', 'checks are')} still to come.`;
+    case 'blocked': return failed.length === 0 ? 'A check failed; send a new file.' : `${capitalise(countInWords(failed.length))} ${plural(failed.length, 'check')} failed: ${failed.map((c) => c.title).join('; ')}. Send a new file.`;
     case 'returned': return 'The curator returned it: replace the file or mend the record first.';
     case 'ready': return recordComplete ? 'Only a contributor of the organisation may send it.' : `Fill in ${missing(record).join(' and ')} first.`;
     case 'in-review': return 'It lies with a curator.';

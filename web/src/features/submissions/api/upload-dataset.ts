@@ -2,7 +2,6 @@ import { problem } from '#shared/contracts/common.ts';
 import { submissionAccepted } from '#shared/contracts/submissions.ts';
 import type { z } from 'zod';
 import { ApiError, contractError, fromProblem, offlineError } from '#web/lib/api-error.ts';
-import { csrfToken } from '#web/lib/api-client.ts';
 
 export interface Upload {
   method: 'POST' | 'PUT';
@@ -12,6 +11,7 @@ export interface Upload {
   gzip: boolean;
   headers: Readonly<Record<string, string>>;
   idempotencyKey: string;
+  csrfToken: string;
   /** Share of the bytes that have left, 0 to 1. */
   onProgress: (share: number) => void;
   signal?: AbortSignal;
@@ -20,12 +20,11 @@ export interface Upload {
 type Accepted = z.infer<typeof submissionAccepted>;
 
 /** Sends a dataset. XMLHttpRequest, because fetch does not tell how much of a body has left. */
-export const uploadDataset = async (upload: Upload): Promise<Accepted> => {
-  const token = await csrfToken().catch((error: unknown) => { throw offlineError(error); });
-  return new Promise<Accepted>((resolve, reject) => {
+export const uploadDataset = (upload: Upload): Promise<Accepted> =>
+  new Promise<Accepted>((resolve, reject) => {
     const request = new XMLHttpRequest();
     request.open(upload.method, upload.address);
-    const headers = { ...upload.headers, accept: 'application/json', 'content-type': 'application/json', 'idempotency-key': upload.idempotencyKey, 'x-csrf-token': token };
+    const headers = { ...upload.headers, accept: 'application/json', 'content-type': 'application/json', 'idempotency-key': upload.idempotencyKey, 'x-csrf-token': upload.csrfToken };
     for (const [name, value] of Object.entries(headers)) request.setRequestHeader(name, value);
     if (upload.gzip) request.setRequestHeader('content-encoding', 'gzip');
     request.upload.onprogress = (event) => { if (event.lengthComputable) upload.onProgress(event.loaded / event.total); };
@@ -36,7 +35,6 @@ export const uploadDataset = async (upload: Upload): Promise<Accepted> => {
     if (upload.signal?.aborted) request.abort();
     else request.send(upload.body);
   });
-};
 
 const bodyOf = (request: XMLHttpRequest): unknown => {
   try { return JSON.parse(request.responseText) as unknown; } catch { return null; }

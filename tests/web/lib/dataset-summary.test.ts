@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { Dataset } from '#shared/formats/types.ts';
-import { summarise } from '#web/features/submissions/dataset-summary.ts';
+import { summarise } from '#web/lib/dataset-summary.ts';
 
 const dataset: Dataset = {
   format: 'evenbeam.dataset', formatVersion: '1.0.0', title: 'Spring run', gateClass: 'quarter-turn-1q/1', runSheet: { id: 'RS-000123', sha256: 'a'.repeat(64) },
