@@ -34,7 +34,7 @@ export const Submission = defineEntity({
     interests: p.text().nullable(),
     embargoUntil: p.date().nullable(),
     notes: p.text().nullable(),
-    progress: p.double().default(0),
+    progress: p.double().$type<number>(),
     stage: p.string().nullable(),
     replicatesDone: p.integer().nullable(),
     replicates: p.integer(),

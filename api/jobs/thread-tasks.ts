@@ -1,3 +1,5 @@
+import type { CheckDatasetInput } from './tasks/check-dataset.ts';
+import type { EstimateDatasetInput } from './tasks/estimate-dataset.ts';
 import type { ThreadProgress } from './threads.ts';
 
 type Report = (progress: ThreadProgress) => void;
@@ -15,6 +17,12 @@ export const threadTasks = {
     }
     return { steps: input.steps };
   },
+  /** Reads a file that has come in: faults with their places, or content id and summary. */
+  'inspect-dataset': async (input: { bytes: Uint8Array }) => (await import('./tasks/inspect-dataset.ts')).inspectDataset(input),
+  /** Checks that come before the estimate. */
+  'check-dataset': async (input: CheckDatasetInput) => (await import('./tasks/check-dataset.ts')).checkDataset(input),
+  /** The official estimate with the review's diagnostics. */
+  'estimate-dataset': async (input: EstimateDatasetInput, report: Report) => (await import('./tasks/estimate-dataset.ts')).estimateDataset(input, report),
 };
 
 type Tasks = typeof threadTasks;

@@ -6,6 +6,8 @@ import type { TaskInput, TaskName, TaskOutput } from './thread-tasks.ts';
 export interface ThreadProgress {
   stage: string;
   fraction: number;
+  /** Replicates done so far, where that is the stage. */
+  replicatesDone?: number;
 }
 
 export type RunInThread = <N extends TaskName>(name: N, input: TaskInput<N>, options?: { signal?: AbortSignal; onProgress?: (progress: ThreadProgress) => void }) => Promise<TaskOutput<N>>;

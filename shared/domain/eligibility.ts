@@ -3,7 +3,7 @@ import type { EntryState } from './life-cycle.ts';
 
 /** Why an entry is left off its board, and what would change that. */
 export interface Reason {
-  code: 'class-unranked' | 'own-design' | 'design' | 'ambiguous' | 'unsettled' | 'no-sealed-check' | 'sealed-check' | 'floor' | 'domain' | 'no-figure' | 'newer' | 'withdrawn';
+  code: 'class-unranked' | 'old' | 'own-design' | 'design' | 'ambiguous' | 'unsettled' | 'no-sealed-check' | 'sealed-check' | 'floor' | 'domain' | 'no-figure' | 'newer' | 'withdrawn';
   sentence: string;
   remedy: string;
 }
@@ -39,8 +39,8 @@ export interface EligibilityFacts {
   patches: readonly PatchFacts[];
   sealedCheck: { passed: boolean } | null;
   figures: readonly Figure[];
-  /** The figure the board is read by. */
-  figure: { key: FigureKey; depth: number | null };
+  /** The figure the board is read by, and what the entry has of it. */
+  figure: { key: FigureKey; depth: number | null; found: Figure | null };
   /** Version name of a newer public entry of the same class, device and register. */
   newer: string | null;
   state: EntryState;
@@ -96,7 +96,7 @@ export const ineligibility = (facts: EligibilityFacts, domains: readonly FigureD
     facts.sealedCheck?.passed === false && { code: 'sealed-check', sentence: 'Sealed circuits were predicted worse or better than chance allows at 99 %.', remedy: 'A new dataset free of drift.' },
     floorReason(facts),
     domainReason(facts, domains),
-    !facts.figures.some((f) => f.key === facts.figure.key && f.depth === facts.figure.depth && f.value !== null) && { code: 'no-figure', sentence: 'The figure this board is read by is not determined by the dataset.', remedy: 'Read the board by another figure, or send a dataset that determines it.' },
+    (facts.figure.found?.value ?? null) === null && { code: 'no-figure', sentence: 'The figure this board is read by is not determined by the dataset.', remedy: 'Read the board by another figure, or send a dataset that determines it.' },
     facts.newer !== null && { code: 'newer', sentence: `A newer entry of the same device and register, ${facts.newer}, stands in its place.`, remedy: 'Nothing: a board shows the newest entry of each device and register.' },
   ];
   return reasons.filter((reason): reason is Reason => Boolean(reason));

@@ -26,7 +26,7 @@ export const errorCodes = {
   'duplicate-content': { status: 409, title: 'The same dataset is here already', help: 'A live submission or an entry holds a dataset with the same content id. Data counts once: continue with the one that exists, or cancel it first.' },
   'already-exists': { status: 409, title: 'A thing of that name is here already', help: 'Names must be unique in their place. Choose another name or use the thing that exists.' },
   'changed-meanwhile': { status: 409, title: 'Somebody changed it in the meantime', help: 'The record was changed after you had read it. Read it again, compare, and repeat your change.' },
-  'idempotency-mismatch': { status: 409, title: 'The Idempotency-Key was used for something else', help: 'This key belongs to an earlier request with another body. Use a new key for a new request.' },
+  'idempotency-mismatch': { status: 422, title: 'The Idempotency-Key was used for something else', help: 'This key belongs to an earlier request with another body. Use a new key for a new request.' },
   withdrawn: { status: 410, title: 'The data of this entry was withdrawn', help: 'Two curators withdrew the entry and gave a public reason, which its page shows. The page and its place in the log stay; the data is not handed out.' },
   'too-large': { status: 413, title: 'It is larger than allowed', help: 'A dataset may hold at most 64 MiB when unpacked. A compressed file that would grow beyond that is stopped while it is unpacked.' },
   'unsupported-media-type': { status: 415, title: 'The kind of content is not taken here', help: 'Send application/json, compressed or not (Content-Encoding: gzip). Nothing else is taken at this address.' },

@@ -1,0 +1,62 @@
+import type { EntityManager } from '@mikro-orm/postgresql';
+import type { Entry } from '#shared/contracts/entries.ts';
+import { versionedAccessionOf } from '#shared/domain/ids.ts';
+import { AppError } from '#shared/errors/app-error.ts';
+import { runSql } from '#api/lib/run-sql.ts';
+import { bytes, type BytesReply } from '#api/lib/reply.ts';
+import { reasonsAgainst, type Candidate } from '#api/modules/boards/standing.ts';
+import { streamBytes } from '#api/modules/submissions/file-store.ts';
+import { requireVersion, requireVersions, withRows, type FrozenVersion } from './load.ts';
+import { pageReading, presentEntry } from './presenter.ts';
+import { versionsWith, type PublicVersion } from './public-entries.ts';
+
+const candidate = (v: FrozenVersion): Candidate => ({ ...v, row: { ...v.row, device: { id: v.row.device.id } } });
+
+/** The page of one version, or of the latest where none is named. */
+export const readEntry = async (em: EntityManager, accession: string, version: number | null): Promise<Entry> => {
+  const versions = await requireVersions(em, accession);
+  const wanted = version === null ? versions[0] : await requireVersion(em, accession, version);
+  const rows = await withRows(em, versions);
+  const shown = rows.find((v) => v.version === wanted.version);
+  if (!shown) throw new Error(`${accession}.${wanted.version} has a state but no row.`);
+  const ofDevice = (await versionsWith(em, 'device_id', shown.row.device.id)).filter((v) => v.accession !== accession);
+  const rivals = (await withRows(em, ofDevice)).filter((v) => v.row.gateClass === shown.row.gateClass);
+  const reasons = reasonsAgainst(candidate(shown), [...rows, ...rivals].map(candidate), pageReading);
+  return presentEntry(shown, rows, reasons);
+};
+
+export type StoredKind = 'dataset' | 'result' | 'replicates' | 'seal';
+
+const forms: Readonly<Record<StoredKind, { type: string; extension: string }>> = {
+  dataset: { type: 'application/json', extension: 'dataset.json' },
+  result: { type: 'application/json', extension: 'result.json' },
+  replicates: { type: 'application/octet-stream', extension: 'replicates.f64' },
+  seal: { type: 'application/json', extension: 'seal.json' },
+};
+
+/** What is no longer handed out once an entry is withdrawn. */
+const closedByWithdrawal: ReadonlySet<StoredKind> = new Set(['dataset', 'replicates']);
+
+/** A file name as a header takes it: RFC 6266 with an ASCII stand-in. */
+const disposition = (name: string): string => `attachment; filename="${name.replace(/[^\x20-\x7e]|["\\%]/g, '_')}"; filename*=UTF-8''${encodeURIComponent(name).replace(/['()*]/g, (c) => `%${c.charCodeAt(0).toString(16).toUpperCase()}`)}`;
+
+const nameFor = async (em: EntityManager, version: PublicVersion, kind: StoredKind): Promise<string> => {
+  const usual = `${versionedAccessionOf(version.accession, version.version)}.${forms[kind].extension}`;
+  if (kind !== 'dataset') return usual;
+  const [row] = await runSql<{ file_name: string }>(em, 'select file_name from entry_version where id = $1', [version.id]);
+  return row?.file_name ?? usual;
+};
+
+/** Stored bytes of a version, exactly as they were frozen; the strong ETag is their SHA-256. */
+export const readStored = async (em: EntityManager, accession: string, number: number, kind: StoredKind, ifNoneMatch: string | undefined): Promise<BytesReply> => {
+  const version = await requireVersion(em, accession, number);
+  if (version.state === 'withdrawn' && closedByWithdrawal.has(kind)) throw new AppError('withdrawn', `${versionedAccessionOf(accession, number)} was withdrawn; its ${kind} is no longer handed out. The page tells the reason.`);
+  const [row] = await runSql<{ sha256: string; size: number }>(em, 'select sha256, length(bytes) as size from entry_bytes where accession = $1 and version = $2 and kind = $3', [accession, number, kind]);
+  if (!row) throw new AppError('not-found', `${versionedAccessionOf(accession, number)} has no ${kind}: its circuits came from no run sheet.`);
+  const etag = `"${row.sha256}"`;
+  const headers = { etag, 'cache-control': 'public, max-age=0, must-revalidate' };
+  if (ifNoneMatch?.split(',').some((tag) => tag.trim().replace(/^W\//, '') === etag || tag.trim() === '*')) return bytes('', forms[kind].type, { status: 304, headers });
+  return bytes(streamBytes(em, 'entry', accession, number, kind), forms[kind].type, {
+    headers: { ...headers, 'content-length': String(row.size), 'content-disposition': disposition(await nameFor(em, version, kind)), 'x-content-type-options': 'nosniff' },
+  });
+};
