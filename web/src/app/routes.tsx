@@ -19,6 +19,11 @@ export const routesOf = (queryClient: QueryClient): RouteObject[] => {
           errorElement: <RouteFault />,
           children: [
             { index: true, lazy: page(() => import('./routes/home.tsx')) },
+            { path: 'find', lazy: page(() => import('./routes/find.tsx')) },
+            { path: 'boards', lazy: page(() => import('./routes/boards.tsx')) },
+            { path: 'boards/:gateClass/:version', lazy: page(() => import('./routes/board.tsx')) },
+            { path: 'entries/:accession', lazy: page(() => import('./routes/entry.tsx')) },
+            { path: 'entries/:accession/v/:n', lazy: page(() => import('./routes/entry.tsx')) },
             ...deskRoutes(page),
             { path: '*', lazy: page(() => import('./routes/not-found.tsx')) },
           ],

@@ -42,3 +42,7 @@ export function beamParts(value: number | null, intervals: readonly Interval[] |
   }
   return { dot: value === null ? null : inside(axis.at(value)), bars };
 }
+
+/** Values an axis must hold: the ends of the 95 % intervals, and estimates that have none. */
+export const beamExtent = (figures: readonly { value: number | null; intervals: readonly Interval[] | null }[]): number[] =>
+  figures.flatMap((f) => (f.value === null ? [] : [f.value, ...(f.intervals ?? []).filter((i) => i.level > 0.9).flatMap((i) => [i.low, i.high])]));

@@ -3,11 +3,8 @@ import { columnDecimals, figureDecimals, figureRange, figureValue, type FigureLi
 import type { ReactNode } from 'react';
 import { linearAxis } from './axis.ts';
 import { AxisStrip } from './axis-strip.tsx';
+import { beamExtent } from './beam-geometry.ts';
 import { BeamPlot } from './beam-plot.tsx';
-
-/** Values an axis must hold: the ends of the 95 % intervals, and estimates that have none. */
-export const beamExtent = (figures: readonly Pick<FigureLike, 'value' | 'intervals'>[]): number[] =>
-  figures.flatMap((f) => (f.value === null ? [] : [f.value, ...(f.intervals ?? []).filter((i) => i.level > 0.9).flatMap((i) => [i.low, i.high])]));
 
 /** A beam on an axis of its own, for rows whose figures cannot share one (a preview). */
 export function OwnAxisBeam({ figure }: { figure: FigureLike }) {

@@ -3,7 +3,7 @@ const carried = ['fill', 'fill-opacity', 'stroke', 'stroke-width', 'stroke-dasha
 const namespace = 'http://www.w3.org/2000/svg';
 
 /** Room round the plot for the words of its axes, in pixels. */
-const margin = { top: 64, right: 72, bottom: 56, left: 84 };
+const plotMargin = { top: 64, right: 72, bottom: 56, left: 84 };
 
 const carryStyles = (drawn: Element, copy: Element): void => {
   const computed = getComputedStyle(drawn);
@@ -17,7 +17,7 @@ const carryStyles = (drawn: Element, copy: Element): void => {
 };
 
 /** A drawing of the page as a file of its own: same look and theme, no style sheet needed, titled. */
-export function standaloneSvg(drawn: SVGSVGElement, title: string): string {
+export function standaloneSvg(drawn: SVGSVGElement, title: string, margin = plotMargin): string {
   const { width, height } = drawn.getBoundingClientRect();
   const copy = drawn.cloneNode(true) as SVGSVGElement;
   carryStyles(drawn, copy);

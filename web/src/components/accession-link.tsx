@@ -1,0 +1,9 @@
+import { Link } from 'react-router-dom';
+import { versionedAccessionOf } from '#shared/domain/ids.ts';
+
+export const entryPath = (accession: string, version: number): string => `/entries/${accession}/v/${version}`;
+
+/** "EVB-000042.2", leading to that version. */
+export function AccessionLink({ accession, version }: { accession: string; version: number }) {
+  return <Link className="nowrap" to={entryPath(accession, version)}>{versionedAccessionOf(accession, version)}</Link>;
+}

@@ -1,0 +1,31 @@
+import { queryOptions } from '@tanstack/react-query';
+import { board, boardList, type Board, type BoardFigure } from '#shared/contracts/boards.ts';
+import { apiGet } from '#web/lib/api-client.ts';
+
+export const boardListQuery = () =>
+  queryOptions({ queryKey: ['boards'], queryFn: ({ signal }) => apiGet('/api/v1/boards', boardList, { signal, query: { limit: 200 } }) });
+
+/** How a board is read: kept in the address of the page. */
+export interface BoardView {
+  figure: BoardFigure;
+  modality: string | undefined;
+  provider: string | undefined;
+  within: number | undefined;
+}
+
+const apiPath = (gateClass: string): string => `/api/v1/boards/${gateClass.split('/').map(encodeURIComponent).join('/')}`;
+
+/** The address of the same board as JSON, for whoever wants the numbers. */
+export const boardJsonAddress = (gateClass: string, view: BoardView): string => {
+  const search = new URLSearchParams({ figure: view.figure });
+  if (view.modality) search.set('modality', view.modality);
+  if (view.provider) search.set('provider', view.provider);
+  if (view.within) search.set('within', String(view.within));
+  return `${apiPath(gateClass)}?${search}`;
+};
+
+export const boardQuery = (gateClass: string, view: BoardView) =>
+  queryOptions({
+    queryKey: ['board', gateClass, view],
+    queryFn: ({ signal }): Promise<Board> => apiGet(apiPath(gateClass), board, { signal, query: { ...view } }),
+  });

@@ -1,0 +1,53 @@
+import type { Entry } from '#shared/contracts/entries.ts';
+import { figureRange, figureValue } from '#shared/domain/figure-words.ts';
+import type { Scale } from '#shared/domain/format.ts';
+import type { Axis } from '#web/charts/axis.ts';
+import { AxisStrip } from '#web/charts/axis-strip.tsx';
+import { BeamPlot } from '#web/charts/beam-plot.tsx';
+import { tableRoles as r } from '#web/components/table-roles.ts';
+import type { GateFigures } from '../gate-rows.ts';
+
+type EntryFigure = Entry['figures'][number];
+
+function FigureCells({ figure, axis, decimals, scale = 'plain', name }: { figure: EntryFigure | null; axis: Axis; decimals: number; scale?: Scale; name: string }) {
+  if (!figure || figure.value === null) {
+    return <td {...r.cell} colSpan={2} className="nd" data-l={name}><span className="undetermined">Not determined by this gate set.</span> <span className="sub">{figure?.reason}</span></td>;
+  }
+  return (
+    <>
+      <td {...r.cell} className="ax">
+        <BeamPlot axis={axis} value={figure.value} intervals={figure.intervals} zero={axis.domain[0] < 0} />
+        <div className="phoneaxis"><AxisStrip axis={axis} side="bottom" every={2} /></div>
+      </td>
+      <td {...r.cell} className="two" data-l={name}><b>{figureValue(figure, decimals, scale)}</b><span className="sub">{figureRange(figure, 0.95, decimals, scale) ?? 'no interval'}</span></td>
+    </>
+  );
+}
+
+/** Gate loss and angle error side by side, each with one axis for all gates. */
+export function GateTable({ figures }: { figures: GateFigures }) {
+  const { rows, loss, angle } = figures;
+  return (
+    <table className="figs" {...r.table}>
+      <caption>Gate loss and angle error <span className="quiet">(each on an axis of its own, 95 % intervals in figures)</span></caption>
+      <thead {...r.group}>
+        <tr {...r.row}>
+          <th {...r.columnHead} scope="col">Gate</th>
+          <th {...r.columnHead} scope="col" className="ax"><span className="lbl">Gate loss, thousandths</span><AxisStrip axis={loss.axis} side="top" /></th>
+          <th {...r.columnHead} scope="col">Estimate<span className="unit">95 % interval</span></th>
+          <th {...r.columnHead} scope="col" className="ax"><span className="lbl">Angle error, radians</span><AxisStrip axis={angle.axis} side="top" /></th>
+          <th {...r.columnHead} scope="col">Estimate<span className="unit">95 % interval</span></th>
+        </tr>
+      </thead>
+      <tbody {...r.group}>
+        {rows.map((row) => (
+          <tr key={row.label} {...r.row}>
+            <th {...r.rowHead} scope="row" className="row">{row.words}</th>
+            <FigureCells figure={row.loss} axis={loss.axis} decimals={loss.decimals} scale="thousandths" name="Gate loss, thousandths" />
+            <FigureCells figure={row.angle} axis={angle.axis} decimals={angle.decimals} name="Angle error, radians" />
+          </tr>
+        ))}
+      </tbody>
+    </table>
+  );
+}
