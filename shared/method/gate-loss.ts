@@ -57,6 +57,12 @@ export class GateLoss {
     return this.turning >= 0;
   }
 
+  /** The distinct ideal eigenvalues, that of the angle first; null where the gate turns nothing. */
+  turningSpectrum(): { re: number; im: number; times: number }[] | null {
+    if (this.turning < 0) return null;
+    return [this.groups[this.turning]!, ...this.groups.filter((_, i) => i !== this.turning)];
+  }
+
   /** Reads the D×D noisy map at `at` of `maps`; sets `loss` and `angle`. */
   measure(maps: Float64Array, at: number): void {
     this.loss = this.angle = NaN;

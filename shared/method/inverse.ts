@@ -25,6 +25,8 @@ export interface Inverse {
    * in `out` alike with `columns`. `out` is overwritten.
    */
   apply: (x: Float64Array, out: Float64Array, groups: number) => void;
+  /** (C⁺)ᵀ·w: how a linear function w of the parameters weighs the rows. */
+  applyTranspose: (w: Float64Array) => Float64Array;
 }
 
 /** Designs up to this many columns always get the SVD: it costs milliseconds and its whole spectrum is published. */
@@ -78,6 +80,13 @@ export function fastInverse(design: SparseRows, gauge: Gauge): Inverse | null {
       for (let g = 0; g < groups; g++) multiplyFour(transpose, x, g * rows * 4, out, g * columns * 4);
       factor.solve(out, groups);
     },
+    applyTranspose: (w) => {
+      const weights = new Float64Array(rows);
+      for (let i = 0; i < columns; i++) four[4 * i] = w[i]!;
+      factor.solve(four, 1);
+      multiplyVector(design, four.filter((_, i) => i % 4 === 0), weights);
+      return weights;
+    },
   };
 }
 
@@ -92,6 +101,7 @@ export function svdInverse(design: SparseRows): Inverse {
   const { rows, columns } = design;
   const svd = singularValues(toDense(design), rows, columns);
   const rank = rankAt(svd.values, RANK_CUT);
+  // Kept with its sign turned: the panel product subtracts.
   const inverse = invertSvd(svd, rank, rows, columns);
   const nullBasis = new Float64Array((columns - rank) * columns);
   for (let k = rank; k < columns; k++) nullBasis.set(svd.right[k]!, (k - rank) * columns);
@@ -102,6 +112,11 @@ export function svdInverse(design: SparseRows): Inverse {
     apply: (x, out, groups) => {
       out.fill(0, 0, groups * columns * 4);
       for (let g = 0; g < groups; g++) subtractPanel(inverse, rows, 0, columns, 0, rows, x, g * rows * 4, out, g * columns * 4);
+    },
+    applyTranspose: (w) => {
+      const weights = new Float64Array(rows);
+      for (let i = 0; i < columns; i++) for (let j = 0; j < rows; j++) weights[j]! -= w[i]! * inverse[i * rows + j]!;
+      return weights;
     },
   };
 }

@@ -1,6 +1,6 @@
 import { DEFAULT_REPLICATES, METHOD, MISFIT_DRAWS } from '#shared/method/constants.ts';
 import { determinedCircuits } from '#shared/method/determined.ts';
-import { idealProbabilities, planBenchFigures } from '#shared/method/bench-plans.ts';
+import { planBenchFigures } from '#shared/method/bench-plans.ts';
 import { planFigure, writeFigure, type FigurePlan, type FigureValues } from '#shared/method/figure-plan.ts';
 import { frequenciesOf, type Frequencies } from '#shared/method/frequencies.ts';
 import { planGateFigures } from '#shared/method/gate-plans.ts';
@@ -11,7 +11,7 @@ import { runPasses, type Passes } from '#shared/method/passes.ts';
 import { blockingReason, intervalsWithheld, reportPatch, warningsOf } from '#shared/method/patch-report.ts';
 import { poseProblem, type PatchProblem } from '#shared/method/patch-problem.ts';
 import { predict } from '#shared/method/predictions.ts';
-import { probabilitiesOf, Reader, ReadingCircuits } from '#shared/method/readings.ts';
+import { idealProbabilities, probabilitiesOf, Reader, ReadingCircuits } from '#shared/method/readings.ts';
 import { drawReplicates, type Replicates } from '#shared/method/replicates.ts';
 import { SealedReference } from '#shared/method/sealed-check.ts';
 import type { EstimateInput, EstimateOutput, ReplicateTable } from '#shared/method/types.ts';
@@ -40,7 +40,7 @@ export function estimateJoint(input: EstimateInput): EstimateOutput {
   const withheld = intervalsWithheld(problem, misfit);
 
   const circuits = new ReadingCircuits();
-  const bench = planBenchFigures(problem, gateClass, patch.qubits, circuits);
+  const bench = planBenchFigures(problem, gateClass, dataset.gates, patch.qubits, circuits);
   const gate = planGateFigures(problem, patch.qubits);
   const sealed = planSealed(problem, patch.qubits, indexCircuits(set, sealedCircuits), frequenciesOf(sealedCircuits, set.n), circuits);
   const plans = [...bench.retained, ...bench.output, gate.error, ...gate.loss, ...gate.angle, bench.readout, sealed.plan].map((p) => (blocked === null || p.reason === 'no bench circuits' ? p : { ...p, reason: blocked }));
@@ -74,7 +74,7 @@ function planSealed(problem: PatchProblem, qubits: readonly number[], indexed: I
   });
   return {
     plan, from,
-    idealError: () => meanTotalVariation(idealProbabilities(problem, indexed), 0, counts.observed, 0, indexed.length, d),
+    idealError: () => meanTotalVariation(idealProbabilities(problem.set, indexed), 0, counts.observed, 0, indexed.length, d),
     reference: (passes: Passes, generator: ReturnType<typeof openStream>) => {
       const maps = emptyMaps(problem.set);
       applyParameters(problem.set, problem.layout, passes.e, maps);

@@ -1,7 +1,7 @@
 import { Evaluator } from '#shared/method/evaluator.ts';
 import { withLast } from '#shared/method/frequencies.ts';
 import type { GateSet } from '#shared/method/gate-set.ts';
-import type { NoisyMaps } from '#shared/method/parameters.ts';
+import { applyParameters, emptyMaps, layoutOf, type NoisyMaps } from '#shared/method/parameters.ts';
 
 /** What one figure is read from: the noisy maps and the probabilities of the circuits that figures look at. */
 export interface ReadingContext {
@@ -59,4 +59,11 @@ export function probabilitiesOf(set: GateSet, circuits: readonly Int32Array[], m
   const rows = new Float64Array(circuits.length * (set.d - 1));
   new Evaluator(circuits, set.gates.length, set.D, set.d - 1).run(maps, rows);
   return withLast(rows, circuits.length, set.d);
+}
+
+/** Probabilities at the maps of the set itself, circuits × d. */
+export function idealProbabilities(set: GateSet, circuits: readonly Int32Array[]): Float64Array {
+  const maps = emptyMaps(set);
+  applyParameters(set, layoutOf(set), null, maps);
+  return probabilitiesOf(set, circuits, maps);
 }
