@@ -1,0 +1,8 @@
+import { deliverMailJob } from '#api/mail/deliver-mail.ts';
+import type { Job } from './define-job.ts';
+import { estimateJob } from './estimate.ts';
+import { houseKeepingJob } from './house-keeping.ts';
+import { liftEmbargoesJob } from './lift-embargoes.ts';
+
+/** Every kind of job that a worker takes. */
+export const allJobs: readonly Job[] = [estimateJob, liftEmbargoesJob, deliverMailJob, houseKeepingJob];
