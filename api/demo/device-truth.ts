@@ -4,8 +4,8 @@ import { createGenerator, type Generator } from '#api/demo/simulator/generator.t
 import { AppError } from '#shared/errors/app-error.ts';
 
 /** The two years that the demo registry lives through. */
-export const demoStart = new Date('2024-06-01T00:00:00Z');
-export const demoEnd = new Date('2026-06-01T00:00:00Z');
+export const demoStart = new Date('2024-12-01T00:00:00Z');
+export const demoEnd = new Date('2026-12-01T00:00:00Z');
 const yearMs = 365.25 * 86_400_000;
 
 /** Strengths on `date` relative to the end of the demo; `phase` sets where the slow swing stands. */

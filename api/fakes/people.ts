@@ -25,6 +25,7 @@ export const inventedOrganisations: readonly InventedOrganisation[] = [
   { slug: 'saltmarsh-atoms', name: 'Saltmarsh Atoms', kind: 'provider' },
   { slug: 'tolland-vale-photonics', name: 'Tolland Vale Photonics', kind: 'provider' },
   { slug: 'brackenholt-spin-works', name: 'Brackenholt Spin Works', kind: 'provider' },
+  { slug: 'withy-lane-laboratory', name: 'Withy Lane Laboratory', kind: 'laboratory' },
   { slug: 'greywether-computing', name: 'Greywether Computing', kind: 'buyer' },
   { slug: 'evenbeam-office', name: 'Evenbeam office', kind: 'registry' },
 ];
@@ -47,6 +48,8 @@ export const inventedPeople: readonly InventedPerson[] = [
   person('mirela.sedge', 'Mirela Sedge', 'saltmarsh-atoms', 'Contributor, Saltmarsh Atoms', 'contributor'),
   person('oona.vale', 'Oona Vale', 'tolland-vale-photonics', 'Contributor, Tolland Vale Photonics', 'contributor'),
   person('jonas.bracken', 'Jonas Bracken', 'brackenholt-spin-works', 'Contributor, Brackenholt Spin Works', 'contributor'),
+  person('wanda.rushworth', 'Wanda Rushworth', 'withy-lane-laboratory', 'Contributor, Withy Lane Laboratory', 'contributor'),
+  person('hale.brook', 'Hale Brook', 'withy-lane-laboratory', 'Curator, and member of Withy Lane Laboratory', 'member', ['curator']),
   person('ruth.holloway', 'Ruth Holloway', 'evenbeam-office', 'Curator', 'member', ['curator']),
   person('emil.corrie', 'Emil Corrie', 'evenbeam-office', 'Curator', 'member', ['curator']),
   person('dana.fenwick', 'Dana Fenwick', 'greywether-computing', 'Buyer, Greywether Computing (editor)', 'editor'),
