@@ -3,7 +3,9 @@ import { defineConfig } from 'vitest/config';
 const setupFiles = ['tests/support/fail-on-console.ts'];
 /** The SQL builder still reads fields that the driver has renamed; a note on standard error for every process. */
 const execArgv = ['--disable-warning=DeprecationWarning'];
-const api = ['tests/api/**/*.test.ts'];
+/** The one test of the architecture that asks the running application. */
+const routeRules = 'tests/architecture/route-rules.test.ts';
+const api = ['tests/api/**/*.test.ts', routeRules];
 
 /**
  * pure: shared/, schema/ and the architecture, no database. api: one database a file, copied from a migrated
@@ -12,7 +14,7 @@ const api = ['tests/api/**/*.test.ts'];
 export default defineConfig({
   test: {
     projects: [
-      { test: { name: 'pure', include: ['tests/{shared,schema,architecture,reference,cli}/**/*.test.ts'], environment: 'node', pool: 'forks', execArgv, setupFiles, testTimeout: 60_000 } },
+      { test: { name: 'pure', include: ['tests/{shared,schema,architecture,reference,cli}/**/*.test.ts'], exclude: [routeRules], environment: 'node', pool: 'forks', execArgv, setupFiles, testTimeout: 60_000 } },
       { test: { name: 'api', include: api, environment: 'node', pool: 'forks', execArgv, globalSetup: ['tests/support/postgres-global.ts'], setupFiles, testTimeout: 60_000, hookTimeout: 60_000 } },
       { test: { name: 'web', include: ['tests/web/**/*.test.{ts,tsx}'], environment: 'jsdom', setupFiles: [...setupFiles, 'tests/support/web-setup.ts'], testTimeout: 30_000 } },
       { test: { name: 'e2e', include: ['tests/e2e/**/*.test.ts'], environment: 'node', pool: 'forks', execArgv, fileParallelism: false, globalSetup: ['tests/support/postgres-global.ts'], testTimeout: 180_000, hookTimeout: 180_000 } },
