@@ -32,14 +32,6 @@ export function planGateFigures(problem: PatchProblem, qubits: readonly number[]
   let reason: string | null = null;
   if (!meter.defined) reason = 'not defined: random circuits over these gates do not mix every error into one decay';
   else if (!lossDetermined(problem, all)) reason = 'not determined by this gate set';
-  let first = true;
-  const error = planFigure({
-    key: 'error-per-gate', qubits, reason,
-    read: (c) => {
-      const value = meter.measure(c.maps.gates, first);
-      first = false;
-      return value;
-    },
-  });
+  const error = planFigure({ key: 'error-per-gate', qubits, reason, read: (c) => meter.measure(c.maps.gates) });
   return { error, loss, angle };
 }

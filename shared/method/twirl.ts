@@ -99,3 +99,31 @@ export function hasSingleFixedPoint(blocks: Blocks): boolean {
   for (let i = 0; i < size; i++) if (Math.sqrt(re[i]! * re[i]! + im[i]! * im[i]!) > SECOND) large++;
   return large === 1;
 }
+
+/** y = A·x for m×m matrices, m a multiple of three, A at `at` of `a`; tiles of 3×3. */
+export function multiplyBlock(a: Float64Array, at: number, x: Float64Array, y: Float64Array, m: number): void {
+  for (let i = 0; i < m; i += 3) {
+    const r0 = at + i * m, r1 = r0 + m, r2 = r1 + m;
+    for (let j = 0; j < m; j += 3) {
+      let a0 = 0, a1 = 0, a2 = 0, b0 = 0, b1 = 0, b2 = 0, c0 = 0, c1 = 0, c2 = 0;
+      for (let k = 0; k < m; k++) {
+        const u = a[r0 + k]!, v = a[r1 + k]!, w = a[r2 + k]!;
+        const p = k * m + j;
+        const x0 = x[p]!, x1 = x[p + 1]!, x2 = x[p + 2]!;
+        a0 += u * x0; a1 += u * x1; a2 += u * x2;
+        b0 += v * x0; b1 += v * x1; b2 += v * x2;
+        c0 += w * x0; c1 += w * x1; c2 += w * x2;
+      }
+      const o = i * m + j;
+      y[o] = a0; y[o + 1] = a1; y[o + 2] = a2;
+      y[o + m] = b0; y[o + m + 1] = b1; y[o + m + 2] = b2;
+      y[o + 2 * m] = c0; y[o + 2 * m + 1] = c1; y[o + 2 * m + 2] = c2;
+    }
+  }
+}
+
+export function transposed(a: Float64Array, n: number): Float64Array {
+  const out = new Float64Array(n * n);
+  for (let i = 0; i < n; i++) for (let j = 0; j < n; j++) out[j * n + i] = a[i * n + j]!;
+  return out;
+}

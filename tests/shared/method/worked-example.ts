@@ -1,6 +1,5 @@
 import { readFileSync } from 'node:fs';
-import { bytesToHex, utf8ToBytes } from '@noble/hashes/utils.js';
-import { sha256 } from '@noble/hashes/sha2.js';
+import { contentIdOf } from '#shared/formats/canonical-json.ts';
 import type { CircuitsFile, Dataset } from '#shared/formats/types.ts';
 
 /** The independent estimate beside a worked example of tests/reference/m1. */
@@ -24,10 +23,11 @@ export interface WorkedExample {
 
 export function workedExample(name: string): WorkedExample {
   const text = (kind: string) => readFileSync(new URL(`../../reference/m1/${name}.${kind}.json`, import.meta.url), 'utf8');
+  const dataset = JSON.parse(text('dataset')) as Dataset;
   return {
-    dataset: JSON.parse(text('dataset')) as Dataset,
+    dataset,
     circuits: JSON.parse(text('circuits')) as CircuitsFile,
     expected: JSON.parse(text('expected')) as Expected,
-    contentId: bytesToHex(sha256(utf8ToBytes(text('dataset')))),
+    contentId: contentIdOf(dataset),
   };
 }
