@@ -1,15 +1,23 @@
+import { Submission } from '#api/entities/submission.ts';
 import { giveUpEstimate, runEstimate } from '#api/modules/submissions/run-estimate.ts';
-import { submissionProgress } from '#api/modules/submissions/progress.ts';
 import { defineJob } from './define-job.ts';
+import { latestWrite } from './latest-write.ts';
+import type { EstimateReport } from './tasks/estimate-dataset.ts';
 
 /** Checks and estimates one round of a submission. */
 export const estimateJob = defineJob({
   name: 'estimate',
   subject: ({ submission }) => `submission:${submission}`,
   handle: async ({ data, em, deps, signal, progress, runInThread }) => {
-    const row = submissionProgress(em.fork(), data.submission, data.round, (fault) => deps.log.warn({ err: fault, submission: data.submission }, 'progress was not written'));
+    const { submission: id, round } = data;
+    const fork = em.fork();
+    const row = latestWrite<EstimateReport>(
+      ({ stage, fraction, replicatesDone }) =>
+        fork.nativeUpdate(Submission, { id, round, state: 'checking' }, { progress: Math.min(1, fraction), stage, ...(replicatesDone === undefined ? {} : { replicatesDone }) }),
+      (fault) => deps.log.warn({ err: fault, submission: id }, 'progress was not written'),
+    );
     try {
-      await runEstimate({ em, clock: deps.clock, queue: deps.queue, runInThread, caller: null }, data.submission, data.round, {
+      await runEstimate({ em, clock: deps.clock, queue: deps.queue, runInThread, caller: null }, id, round, {
         signal,
         onProgress: (report) => {
           progress(report.stage, report.fraction);

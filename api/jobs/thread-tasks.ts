@@ -1,12 +1,14 @@
-import type { CheckDatasetInput } from './tasks/check-dataset.ts';
-import type { EstimateDatasetInput } from './tasks/estimate-dataset.ts';
+import { checkDataset, type CheckDatasetInput } from './tasks/check-dataset.ts';
+import { drawRunSheetTask, type DrawSheetInput } from './tasks/draw-sheet.ts';
+import { estimateDataset, type EstimateDatasetInput } from './tasks/estimate-dataset.ts';
+import { inspectDataset } from './tasks/inspect-dataset.ts';
 import type { ThreadProgress } from './threads.ts';
 
 type Report = (progress: ThreadProgress) => void;
 
 /**
  * The tasks a worker thread can do, by name. Inputs and outputs are copied between threads, so they are plain
- * data (typed arrays included). Each is loaded when first asked for.
+ * data (typed arrays included). Only threads load this module.
  */
 export const threadTasks = {
   /** Counts to `steps`, reporting each one: shows that threads, progress and stopping work. */
@@ -18,11 +20,13 @@ export const threadTasks = {
     return { steps: input.steps };
   },
   /** Reads a file that has come in: faults with their places, or content id and summary. */
-  'inspect-dataset': async (input: { bytes: Uint8Array }) => (await import('./tasks/inspect-dataset.ts')).inspectDataset(input),
+  'inspect-dataset': async (input: { bytes: Uint8Array }) => inspectDataset(input),
+  /** Draws a run sheet with its seal. */
+  'draw-sheet': async (input: DrawSheetInput, report: Report) => drawRunSheetTask(input, report),
   /** Checks that come before the estimate. */
-  'check-dataset': async (input: CheckDatasetInput) => (await import('./tasks/check-dataset.ts')).checkDataset(input),
+  'check-dataset': async (input: CheckDatasetInput) => checkDataset(input),
   /** The official estimate with the review's diagnostics. */
-  'estimate-dataset': async (input: EstimateDatasetInput, report: Report) => (await import('./tasks/estimate-dataset.ts')).estimateDataset(input, report),
+  'estimate-dataset': async (input: EstimateDatasetInput, report: Report) => estimateDataset(input, report),
 };
 
 type Tasks = typeof threadTasks;

@@ -18,18 +18,19 @@ export interface ThreadPool {
 }
 
 /**
- * A pool of worker threads for the tasks of thread-tasks.ts. From source the entry is TypeScript and goes through
- * tsx; a bundle names its own entry file. Threads start when first needed and go after a minute idle.
+ * A pool of worker threads for the tasks of thread-tasks.ts. From source the entry goes through tsx; a bundle
+ * names its own entry file. Threads start when first needed and go after a minute idle.
  */
 export const startThreads = (options: { threads?: number | undefined; file?: string | undefined } = {}): ThreadPool => {
-  const filename = options.file ?? new URL('./thread.ts', import.meta.url).href;
+  const filename = options.file ?? new URL('./thread-from-source.mjs', import.meta.url).href;
   const pool = new Piscina({
     filename,
-    ...(filename.endsWith('.ts') ? { execArgv: ['--import', 'tsx'] } : {}),
     minThreads: 0,
     maxThreads: options.threads ?? Math.max(1, availableParallelism() - 1),
     idleTimeout: 60_000,
   });
+  // A thread that dies rejects the task it had; without a listener it would take the process with it.
+  pool.on('error', () => undefined);
   return {
     run: async (name, input, { signal, onProgress } = {}) => {
       const { port1, port2 } = new MessageChannel();

@@ -47,7 +47,7 @@ export const idempotently = async <T>(work: Work, request: Repeatable, run: (wor
   if (before) return before;
   try {
     return await inTransaction(work, async (tx) => {
-      const kept = tx.em.create(IdempotencyKey, { scope, key, fingerprint, status: 0, headers: {}, body: null, createdAt: tx.clock.now() });
+      const kept = tx.em.create(IdempotencyKey, { scope, key, fingerprint, status: 0, headers: {}, body: {}, createdAt: tx.clock.now() });
       await tx.em.flush();
       const answer = await run(tx);
       tx.em.assign(kept, { status: answer.options.status ?? 200, headers: answer.options.headers ?? {}, body: answer.body });

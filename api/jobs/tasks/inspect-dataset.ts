@@ -1,7 +1,7 @@
 import { decodeJson } from '#shared/formats/decode-json.ts';
 import { readDataset } from '#shared/formats/read-dataset.ts';
 import { summariseDataset } from '#api/modules/submissions/dataset-summary.ts';
-import type { Inspection } from '#api/modules/submissions/receive.ts';
+import type { Inspection } from '#api/modules/submissions/inspection.ts';
 
 /** Reads a dataset file whole: its faults with their places, or what the registry needs to know of it. */
 export const inspectDataset = ({ bytes }: { bytes: Uint8Array }): Inspection => {

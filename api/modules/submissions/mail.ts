@@ -1,9 +1,9 @@
 import { interestMonths } from '#shared/domain/rules.ts';
 import type { Move } from '#shared/domain/life-cycle.ts';
-import { MailMessage } from '#api/entities/mail-message.ts';
 import type { Submission } from '#api/entities/submission.ts';
 import { User } from '#api/entities/user.ts';
 import { runSql } from '#api/lib/run-sql.ts';
+import { queueMail } from '#api/mail/queue-mail.ts';
 import type { Work } from '#api/lib/work.ts';
 
 const toContributor = 'contributor';
@@ -51,10 +51,8 @@ const emailOf = async ({ em }: Work, id: string | undefined): Promise<string[]> 
   return user ? [user.email] : [];
 };
 
-export const writeMail = (work: Work, recipients: readonly string[], letter: { subject: string; body: string; topicId: string }): void => {
-  for (const recipient of recipients) {
-    work.em.create(MailMessage, { recipient, subject: letter.subject, body: letter.body, topic: 'submission', topicId: letter.topicId, queuedAt: work.clock.now(), sentAt: null, attempts: 0, lastError: null });
-  }
+export const writeMail = async ({ em, queue, clock }: Work, recipients: readonly string[], letter: { subject: string; body: string; topicId: string }): Promise<void> => {
+  for (const recipient of recipients) await queueMail(em, queue, clock.now(), { recipient, ...letter, topic: 'submission' });
 };
 
 /** Writes the letter that a move owes into the outbox, in the move's transaction. */
@@ -65,5 +63,5 @@ export const oweMail = async (work: Work, submission: Submission, move: Move, re
     letter.to === toCurators ? await curatorsWithoutInterest(work, submission.organisation.id)
     : letter.to === toClaimant ? await emailOf(work, submission.claimedBy?.id)
     : await emailOf(work, submission.createdBy.id);
-  writeMail(work, recipients, { subject: letter.subject(submission), body: letter.body(submission, reason), topicId: submission.id });
+  await writeMail(work, recipients, { subject: letter.subject(submission), body: letter.body(submission, reason), topicId: submission.id });
 };

@@ -1,21 +1,17 @@
 import { randomUUID } from 'node:crypto';
 import { submissionIdOf } from '#shared/domain/ids.ts';
-import { AppError, type ErrorDetail } from '#shared/errors/app-error.ts';
-import type { ErrorCode } from '#shared/errors/codes.ts';
+import { AppError } from '#shared/errors/app-error.ts';
 import { Organisation } from '#api/entities/organisation.ts';
 import { Submission } from '#api/entities/submission.ts';
 import { requireActor } from '#api/lib/actor.ts';
 import { nextNumber } from '#api/lib/names.ts';
 import { runSql } from '#api/lib/run-sql.ts';
 import { inTransaction, type Work } from '#api/lib/work.ts';
-import type { DatasetSummary } from './dataset-summary.ts';
+import type { Inspected } from './inspection.ts';
 import { beginChecks, lockSubmission, receive, replace } from './life-cycle.ts';
 import { explainUnique, placeDataset } from './place.ts';
 
 export const usualReplicates = 2000;
-
-/** What a thread finds out about a file: that it follows the format, and what it says. */
-export type Inspection = { ok: true; contentId: string; bytesSha256: string; summary: DatasetSummary } | { ok: false; code: ErrorCode; message: string; details: ErrorDetail[] };
 
 export interface DatasetFile {
   /** The file unpacked. */
@@ -34,8 +30,6 @@ export interface ReceiveInput extends DatasetFile {
   /** Made for the demo registry, and marked so. */
   demo?: boolean;
 }
-
-export type Inspected = Extract<Inspection, { ok: true }>;
 
 /** Reads the whole file in a thread; throws with a pointer for every fault, before anything is stored. */
 export const inspectDataset = async (work: Work, bytes: Uint8Array): Promise<Inspected> => {

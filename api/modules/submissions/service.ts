@@ -76,7 +76,7 @@ export const writeMessage = (work: Work, id: string, body: string): Promise<Subm
     const message = tx.em.create(SubmissionMessage, { submissionId: id, role: own ? 'contributor' : 'curator', authorId: actor.userId, authorName: actor.name, organisationName: own ? (organisation?.name ?? null) : null, at: tx.clock.now(), body });
     const reader = own ? submission.claimedBy?.id : submission.createdBy.id;
     const user = reader === undefined || reader === actor.userId ? null : await tx.em.findOne(User, { id: reader, disabledAt: null });
-    if (user) writeMail(tx, [user.email], { subject: `A message about ${id}`, body: `${actor.name} wrote about "${submission.title}":\n\n${body}`, topicId: id });
+    if (user) await writeMail(tx, [user.email], { subject: `A message about ${id}`, body: `${actor.name} wrote about "${submission.title}":\n\n${body}`, topicId: id });
     recordAudit(tx.em, { at: tx.clock.now(), action: 'submission.write-message', subjectType: 'submission', subjectId: id, ...(tx.caller ? { caller: tx.caller } : {}), organisationId: submission.organisation.id, requestId: tx.requestId ?? null });
     await tx.em.flush();
     return message;
