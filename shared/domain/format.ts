@@ -74,7 +74,7 @@ export const formatBytes = (bytes: number): string => {
 export const joinWords = (words: readonly string[], last = 'and'): string =>
   words.length < 2 ? (words[0] ?? '') : `${words.slice(0, -1).join(', ')} ${last} ${words[words.length - 1] ?? ''}`;
 
-const numberWords = ['no', 'one', 'two', 'three', 'four', 'five', 'six', 'seven', 'eight', 'nine', 'ten', 'eleven', 'twelve'];
+const numberWords = ['no', 'one', 'two', 'three', 'four', 'five', 'six', 'seven', 'eight', 'nine', 'ten', 'eleven', 'twelve', 'thirteen', 'fourteen', 'fifteen', 'sixteen', 'seventeen', 'eighteen', 'nineteen', 'twenty'];
 /** Small counts in words, others in digits: "three", "17". */
 export const countInWords = (n: number): string => numberWords[n] ?? formatCount(n);
 export const capitalise = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);

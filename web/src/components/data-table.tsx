@@ -50,10 +50,12 @@ interface DataTableProps<T> {
   /** On a phone each row becomes a short list, label before value; otherwise the table scrolls sideways. */
   stack?: boolean;
   initialSort?: { id: string; desc: boolean };
+  /** Name of the scrolling region where the caption is more than text. */
+  region?: string;
 }
 
 /** A table with caption and scopes; sortable columns have a button in their head and say their order. */
-export function DataTable<T extends object>({ caption, captionHidden = false, columns, rows, rowKey, rowClass, tight = false, stack = true, initialSort }: DataTableProps<T>) {
+export function DataTable<T extends object>({ caption, captionHidden = false, columns, rows, rowKey, rowClass, tight = false, stack = true, initialSort, region }: DataTableProps<T>) {
   const [sorting, setSorting] = useState<SortingState>(initialSort ? [initialSort] : []);
   const defs = useMemo(() => columns.map(toDef), [columns]);
   const data = useMemo(() => [...rows], [rows]);
@@ -85,5 +87,5 @@ export function DataTable<T extends object>({ caption, captionHidden = false, co
       </tbody>
     </table>
   );
-  return stack ? drawn : <div {...scrollRegion(typeof caption === 'string' ? caption : 'Table')}>{drawn}</div>;
+  return stack ? drawn : <div {...scrollRegion(region ?? (typeof caption === 'string' ? caption : 'Table'))}>{drawn}</div>;
 }

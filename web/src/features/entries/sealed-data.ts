@@ -34,7 +34,7 @@ export function sealedDrawing(sealed: readonly SealedPoint[]): SealedDrawing {
   const share = linearAxis(shares, { include: [0, 1], pad: 0, count: 2 });
   const x = linearAxis(points.map((p) => p.predicted), { include: [0, 1], pad: 0, count: 4 });
   const widest = Math.max(noise(0.5, shots), ...points.map((p) => Math.abs(p.left)));
-  const y = upright(linearAxis([-widest, widest], { count: 4, pad: 0.12, signed: true }));
+  const y = upright(linearAxis([-widest, widest], { count: 6, pad: 0.12, signed: true }));
   const steps = Array.from({ length: 81 }, (_, i) => i / 80);
   const edge = (sign: 1 | -1, ps: readonly number[]): string => ps.map((p, i) => `${i === 0 ? 'M' : 'L'}${x.at(p)} ${y.at(sign * noise(p, shots))}`).join('');
   const upper = edge(1, steps);

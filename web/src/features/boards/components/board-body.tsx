@@ -32,7 +32,7 @@ export function BoardBody({ board }: { board: Board }) {
     <div className="flow">
       {demo > 0 ? <DemoNote some={demo < board.rows.length} /> : null}
       {drawn ? <KeyLine /> : null}
-      {drawn ? <BoardRows rows={board.rows} data={data} caption={caption} quiet={readingWords(board.figure)} /> : <BoardTable rows={board.rows} decimals={data.decimals} caption={`${caption} ${readingWords(board.figure)}`} />}
+      {drawn ? <BoardRows rows={board.rows} data={data} caption={caption} quiet={readingWords(board.figure)} /> : <BoardTable rows={board.rows} decimals={data.decimals} caption={<>{caption} <span className="quiet">{readingWords(board.figure)}</span></>} />}
       <BoardDownloads board={board} data={data} view={view} />
     </div>
   );

@@ -32,8 +32,8 @@ export function BoardRows({ rows, data, caption, quiet }: { rows: readonly Board
           return (
             <tr key={row.accession} {...r.row} className={mine ? 'own' : undefined}>
               <th {...r.rowHead} scope="row" className="c-name">
-                <Link className="name nowrap" to={entryPath(row.accession, row.version)}>{row.device.name}</Link> {row.demo ? <DemoTag /> : null}
-                <span className="sub">{row.device.provider.name}, {modalityWords[row.device.modality]}</span>
+                <Link className="name nowrap" to={entryPath(row.accession, row.version)}>{row.device.name}</Link>
+                <span className="sub">{row.device.provider.name}, {modalityWords[row.device.modality]}{row.demo ? <>; <DemoTag /></> : null}</span>
               </th>
               <td {...r.cell} className="c-plot"><BeamPlot axis={data.axis} value={row.figure.value} intervals={row.figure.intervals} own={mine} /></td>
               <td {...r.cell} className="c-val"><FigureText figure={row.figure} decimals={data.decimals} /></td>

@@ -1,4 +1,4 @@
-import { useMemo } from 'react';
+import { useMemo, type ReactNode } from 'react';
 import type { BoardRow } from '#shared/contracts/boards.ts';
 import { figureRange, figureValue, intervalAt } from '#shared/domain/figure-words.ts';
 import { formatDate } from '#shared/domain/format-date.ts';
@@ -13,15 +13,15 @@ const intervalColumn = (level: number, decimals: number): Column<BoardRow> => ({
 });
 
 /** The board as a plain table; every column can be sorted. An interval sorts by its width. */
-export function BoardTable({ rows, decimals, caption }: { rows: readonly BoardRow[]; decimals: number; caption: string }) {
+export function BoardTable({ rows, decimals, caption }: { rows: readonly BoardRow[]; decimals: number; caption: ReactNode }) {
   const columns = useMemo((): Column<BoardRow>[] => [
-    { id: 'device', header: 'Device', rowHeader: true, nowrap: true, cell: (row) => <>{row.device.name} {row.demo ? <DemoTag /> : null}</>, sortBy: (row) => row.device.name },
-    { id: 'provider', header: 'Provider', cell: (row) => row.device.provider.name, sortBy: (row) => row.device.provider.name },
+    { id: 'device', header: 'Device', rowHeader: true, nowrap: true, cell: (row) => row.device.name, sortBy: (row) => row.device.name },
+    { id: 'provider', header: 'Provider', cell: (row) => <>{row.device.provider.name}{row.demo ? <>; <DemoTag /></> : null}</>, sortBy: (row) => row.device.provider.name },
     { id: 'modality', header: 'Modality', nowrap: true, cell: (row) => modalityWords[row.device.modality], sortBy: (row) => modalityWords[row.device.modality] },
     { id: 'estimate', header: 'Estimate', numeric: true, cell: (row) => figureValue(row.figure, decimals), sortBy: (row) => row.figure.value },
     intervalColumn(0.5, decimals), intervalColumn(0.8, decimals), intervalColumn(0.95, decimals),
     { id: 'entry', header: 'Entry', nowrap: true, cell: (row) => <AccessionLink accession={row.accession} version={row.version} />, sortBy: (row) => row.accession },
     { id: 'run', header: 'Last circuit run', nowrap: true, cell: (row) => formatDate(row.lastCircuitAt), sortBy: (row) => row.lastCircuitAt },
   ], [decimals]);
-  return <DataTable caption={caption} columns={columns} rows={rows} rowKey={(row) => row.accession} tight stack={false} />;
+  return <DataTable caption={caption} columns={columns} rows={rows} rowKey={(row) => row.accession} tight stack={false} region="The board as a table" />;
 }

@@ -8,7 +8,7 @@ import { Section } from '#web/components/section.tsx';
 type Left = Board['notListed'][number];
 
 const columns: readonly Column<Left>[] = [
-  { id: 'device', header: 'Device', rowHeader: true, cell: ({ row }) => <>{row.device.name} {row.demo ? <DemoTag /> : null}<span className="sub">{row.device.provider.name}</span></> },
+  { id: 'device', header: 'Device', rowHeader: true, cell: ({ row }) => <><span className="nowrap">{row.device.name}</span><span className="sub">{row.device.provider.name}{row.demo ? <>; <DemoTag /></> : null}</span></> },
   { id: 'entry', header: 'Entry', nowrap: true, cell: ({ row }) => <AccessionLink accession={row.accession} version={row.version} /> },
   { id: 'reason', header: 'Reason', cell: ({ reasons }) => <Lines of={reasons.map((r) => r.sentence)} /> },
   { id: 'remedy', header: 'What would change it', cell: ({ reasons }) => <Lines of={[...new Set(reasons.map((r) => r.remedy))]} /> },

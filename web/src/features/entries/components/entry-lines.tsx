@@ -11,8 +11,8 @@ export function EntryLines({ items }: { items: readonly EntryItem[] }) {
       {items.map((item) => (
         <li key={`${item.accession}.${item.version}`}>
           <Link className="name nowrap" to={entryPath(item.accession, item.version)}>{item.device.name}</Link>
-          <span>{item.device.provider.name} {item.demo ? <DemoTag /> : null}</span>
-          <span className="quiet">{item.gateClassTitle}{item.state === 'frozen' ? '' : `, ${item.state}`}</span>
+          <span>{item.device.provider.name}</span>
+          <span className="quiet">{item.gateClassTitle}{item.state === 'frozen' ? '' : `, ${item.state}`}{item.demo ? <>; <DemoTag /></> : null}</span>
           <span className="nowrap"><AccessionLink accession={item.accession} version={item.version} /></span>
           <span className="quiet nowrap">{formatDate(item.frozenAt)}</span>
         </li>
