@@ -39,7 +39,8 @@ describe.each(cases)('the estimate of $name, against an independent implementati
       const got = result.patches[i]!;
       expect(got).toMatchObject({ qubits, columns, gaugeDimension, rank, rankAmbiguous, complete, sound, settled });
       near(got.conditionRatio, want.conditionRatio, 'ratio');
-      near(got.spectrum[0], want.spectrum[0], 'largest singular value');
+      // A chained pair's fixture leaves its spectrum out: the text does not say whether at ideal or at estimated local gates.
+      if (want.spectrum.length > 0) near(got.spectrum[0], want.spectrum[0], 'largest singular value');
     });
   });
 
