@@ -10,14 +10,14 @@ type Counts = Pick<Device, 'entries' | 'lastEntryAt'>;
 
 /** Public entries of devices: how many, and when the last one became public. Devices without any are left out. */
 export const publicCounts = async (em: EntityManager, devices: readonly string[]): Promise<Map<string, Counts>> => {
-  const rows = await runSql<{ device_id: string; entries: number; last_at: Date }>(
+  const rows = await runSql<{ device_id: string; entries: number; last_at: string }>(
     em,
     `select v.device_id, count(distinct v.accession)::int as entries, max(s.at) as last_at
        from entry_version v join entry_state s on s.accession = v.accession and s.version = v.version and s.state = 'frozen'
       where v.device_id = any($1) group by v.device_id`,
     [devices],
   );
-  return new Map(rows.map((row) => [row.device_id, { entries: row.entries, lastEntryAt: row.last_at.toISOString() }]));
+  return new Map(rows.map((row) => [row.device_id, { entries: row.entries, lastEntryAt: new Date(row.last_at).toISOString() }]));
 };
 
 /** The figures of a device over time: every public version that was not withdrawn, by its last circuit. */

@@ -16,10 +16,11 @@ interface Row {
   accession: string;
   version: number;
   state: PublicVersion['state'];
-  frozen_at: Date;
+  /** As text: the ORM turns the driver's own parsing of instants off. */
+  frozen_at: string;
 }
 
-const asVersion = (row: Row): PublicVersion => ({ id: row.id, accession: row.accession, version: row.version, state: row.state, frozenAt: row.frozen_at });
+const asVersion = (row: Row): PublicVersion => ({ id: row.id, accession: row.accession, version: row.version, state: row.state, frozenAt: new Date(row.frozen_at) });
 
 /** Versions with their newest state; those under embargo are left out by the join on the moment of freezing. */
 const versions = `

@@ -51,7 +51,7 @@ describe('the life of a submission over HTTP', () => {
     const at = '/api/v1/entries/EVB-000001/v/1';
     const dataset = await reader('get', `${at}/dataset`).buffer(true).parse(collect);
     expect(Buffer.compare(dataset.body as Buffer, bytes)).toBe(0);
-    expect(dataset.headers).toMatchObject({ 'content-type': 'application/json', etag: `"${sha256(bytes)}"`, 'content-disposition': expect.stringContaining('meadow spring.json') as string });
+    expect(dataset.headers).toMatchObject({ 'content-type': 'application/json; charset=utf-8', etag: `"${sha256(bytes)}"`, 'content-disposition': expect.stringContaining('meadow spring.json') as string });
     expect((await reader('get', `${at}/dataset`).set('if-none-match', `"${sha256(bytes)}"`)).status).toBe(304);
     for (const kind of ['result', 'replicates'] as const) {
       const file = await reader('get', `${at}/${kind}`).buffer(true).parse(collect);
