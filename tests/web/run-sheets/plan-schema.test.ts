@@ -3,9 +3,11 @@ import { planSchema, resizedRegister, type PlanFields } from '#web/features/run-
 import { gateClassAnswer } from '#tests/support/fixtures/desk-people.ts';
 
 const good: PlanFields = { device: 'd', gateClass: 'quarter-turn-1q/1', register: ['q3'], circuits: '230', shots: '1 000', readoutError: '0.010', wanted: '0.0030' };
-const schema = planSchema(gateClassAnswer.items);
+const classOf = (id: string) => gateClassAnswer.items.find((c) => c.id === id);
+const schema = planSchema(classOf(good.gateClass));
 const faults = (change: Partial<PlanFields>): Record<string, string> => {
-  const parsed = schema.safeParse({ ...good, ...change });
+  const fields = { ...good, ...change };
+  const parsed = planSchema(classOf(fields.gateClass)).safeParse(fields);
   return parsed.success ? {} : Object.fromEntries(parsed.error.issues.map((issue) => [issue.path.join('.'), issue.message]));
 };
 
@@ -18,6 +20,12 @@ describe('the rules of a plan', () => {
     expect(faults({ circuits: '120' })).toEqual({ circuits: '120 is below the floor of 200 for this gate class.' });
     expect(faults({ shots: '499' })).toEqual({ shots: '499 is below the floor of 500 for this gate class.' });
     expect(faults({ circuits: '200', shots: '500' })).toEqual({});
+  });
+
+  it('tells all faults at once', () => {
+    expect(faults({ circuits: '120', shots: '1.5', register: [''], device: '' })).toEqual({
+      circuits: '120 is below the floor of 200 for this gate class.', shots: 'Give a whole number of shots; 1.5 is not one.', 'register.0': 'Name this qubit as your control software does.', device: 'Choose a device.',
+    });
   });
 
   it('takes the floors from the class chosen', () => {

@@ -4,4 +4,31 @@ import type { RouteModule } from './lazy-route.ts';
 type PageOf = (load: () => Promise<RouteModule>) => LazyRouteFunction<RouteObject>;
 
 /** Pages behind sign-in: desk, run sheets, submissions, reviews, tokens. */
-export const deskRoutes = (_page: PageOf): RouteObject[] => [];
+export const deskRoutes = (page: PageOf): RouteObject[] => [
+  {
+    path: 'desk',
+    lazy: page(() => import('./routes/desk/layout.tsx')),
+    children: [
+      {
+        lazy: page(() => import('./routes/desk/contributor.tsx')),
+        children: [
+          { index: true, lazy: page(() => import('./routes/desk/home.tsx')) },
+          { path: 'run-sheets', lazy: page(() => import('./routes/desk/run-sheets.tsx')) },
+          { path: 'run-sheets/new', lazy: page(() => import('./routes/desk/run-sheet-new.tsx')) },
+          { path: 'submissions', lazy: page(() => import('./routes/desk/submissions.tsx')) },
+          { path: 'submissions/new', lazy: page(() => import('./routes/desk/submission-new.tsx')) },
+          { path: 'devices', lazy: page(() => import('./routes/desk/devices.tsx')) },
+          { path: 'tokens', lazy: page(() => import('./routes/desk/tokens.tsx')) },
+        ],
+      },
+      // A curator or steward may read these too; the registry decides.
+      { path: 'run-sheets/:id', lazy: page(() => import('./routes/desk/run-sheet.tsx')) },
+      { path: 'submissions/:id', lazy: page(() => import('./routes/desk/submission.tsx')) },
+    ],
+  },
+  {
+    path: 'review',
+    lazy: page(() => import('./routes/review/layout.tsx')),
+    children: [{ path: ':id?', lazy: page(() => import('./routes/review/desk.tsx')) }],
+  },
+];

@@ -5,7 +5,6 @@ export type Outcome = ReviewDecision['outcome'];
 
 /** The form starts without an outcome and without the curator's word; the contract's rules judge the rest. */
 export const decisionSchema = reviewDecision.extend({ outcome: z.enum(reviewDecision.shape.outcome.options, { error: 'Choose what you decide.' }) });
-export interface DecisionFields { outcome: Outcome | ''; reason: string; noInterest: boolean }
 
 export const outcomes: readonly { value: Outcome; title: string; hint: string }[] = [
   { value: 'accept', title: 'Accept', hint: 'Frozen and public at once, or after the embargo' },

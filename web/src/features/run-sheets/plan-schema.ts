@@ -28,7 +28,8 @@ export interface Plan {
 /** Digits as people type them: spaces of any kind between thousands are dropped. */
 const bare = (text: string): string => text.replace(/[\s\u00a0\u2009\u202f]/g, '');
 
-const wholeNumber = (noun: string, most: number) =>
+/** A whole number from the class's floor to the most a sheet may have; every fault names the value. */
+const wholeNumber = (noun: string, floor: number, most: number) =>
   z.string().transform((text, context) => {
     const digits = bare(text);
     const fault = (message: string) => { context.addIssue({ code: 'custom', message }); return z.NEVER; };
@@ -36,6 +37,7 @@ const wholeNumber = (noun: string, most: number) =>
     if (!/^\d+$/.test(digits)) return fault(`Give a whole number of ${noun}; ${text.trim()} is not one.`);
     const value = Number(digits);
     if (value > most) return fault(`${text.trim()} is above the ${noun} a sheet may have, ${most}.`);
+    if (value < floor) return fault(belowFloor(value, floor));
     return value;
   });
 
@@ -61,26 +63,24 @@ const wantedWidth = z.string().transform((text, context) => {
 
 const limits = runSheetCreate.shape;
 
-/** The plan's rules. Floors and the size of the register come from the gate class chosen. */
-export const planSchema = (classes: readonly GateClassSummary[]) =>
+const register = z.array(z.string().trim().max(40, 'A qubit name has at most 40 characters.')).superRefine((names, context) => {
+  names.forEach((name, i) => {
+    const fault = (message: string) => context.addIssue({ code: 'custom', path: [i], message });
+    if (name === '') fault('Name this qubit as your control software does.');
+    else if (names.indexOf(name) < i) fault(`${name} is named twice.`);
+  });
+});
+
+/** The plan's rules for one gate class, which brings the floors. Each field is judged by itself, so that all faults are told at once. */
+export const planSchema = (gateClass: GateClassSummary | undefined) =>
   z.object({
     device: z.string().min(1, 'Choose a device.'),
-    gateClass: z.string().refine((id) => classes.some((c) => c.id === id), { error: 'Choose a gate class.' }),
-    register: z.array(z.string().trim().max(40, 'A qubit name has at most 40 characters.')),
-    circuits: wholeNumber('circuits', limits.circuits.maxValue ?? 20_000),
-    shots: wholeNumber('shots', limits.shots.maxValue ?? 10_000_000),
+    gateClass: z.string().refine((id) => id === gateClass?.id, { error: 'Choose a gate class.' }),
+    register,
+    circuits: wholeNumber('circuits', gateClass?.floor.circuits ?? 1, limits.circuits.maxValue ?? 20_000),
+    shots: wholeNumber('shots', gateClass?.floor.shots ?? 1, limits.shots.maxValue ?? 10_000_000),
     readoutError,
     wanted: wantedWidth,
-  }).superRefine((plan, context) => {
-    const gateClass = classes.find((c) => c.id === plan.gateClass);
-    if (!gateClass) return;
-    const fault = (path: (string | number)[], message: string) => context.addIssue({ code: 'custom', path, message });
-    if (plan.circuits < gateClass.floor.circuits) fault(['circuits'], belowFloor(plan.circuits, gateClass.floor.circuits));
-    if (plan.shots < gateClass.floor.shots) fault(['shots'], belowFloor(plan.shots, gateClass.floor.shots));
-    plan.register.forEach((name, i) => {
-      if (name === '') fault(['register', i], 'Name this qubit as your control software does.');
-      else if (plan.register.indexOf(name) < i) fault(['register', i], `${name} is named twice.`);
-    });
   });
 
 export const belowFloor = (value: number, floor: number): string => `${value} is below the floor of ${floor} for this gate class.`;

@@ -3,13 +3,16 @@ import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { useForm } from 'react-hook-form';
 import { z } from 'zod';
 import { deviceCreate, type DeviceSummary } from '#shared/contracts/devices.ts';
+import { capitalise } from '#shared/domain/format.ts';
 import { Button } from '#web/components/button.tsx';
 import { Message } from '#web/components/message.tsx';
 import { Select } from '#web/components/select.tsx';
 import { TextField } from '#web/components/text-field.tsx';
 import { asApiError } from '#web/lib/api-error.ts';
+import { modalityWords } from '#web/lib/modality-words.ts';
 import { addDevice, ownDevicesQuery } from '../api/own-devices.ts';
-import { modalityOptions } from '../modality-words.ts';
+
+const modalityOptions = deviceCreate.shape.modality.options.map((value) => ({ value, label: capitalise(modalityWords[value]) }));
 
 const fields = deviceCreate.omit({ organisation: true }).extend({ name: z.string().trim().min(1, 'Name the device.').max(80, 'A device name has at most 80 characters.') });
 

@@ -6,8 +6,8 @@ import { formatCount } from '#shared/domain/format.ts';
 export function HowToRun({ sheet }: { sheet: RunSheetView }) {
   const all = (sheet.circuits ?? 0) + (sheet.sealed ?? 0);
   return (
-    <Steps items={[
-      <p key="run">Run all {formatCount(all)} circuits on {sheet.register.join(', ')} of {sheet.device.name}, {formatCount(sheet.shots)} shots each or more. Gates stand in order of time; an empty list means: prepare and measure at once.</p>,
+    <Steps wide items={[
+      <p key="run">Run all {formatCount(all)} circuits on {sheet.register.join(', ')} of {sheet.device.name}, {formatCount(sheet.shots)} shots each, neither more nor fewer. Gates stand in order of time; an empty list means: prepare and measure at once.</p>,
       <p key="order">Any order will do. Circuits that run together in time get the same number in <code>block</code>, so that drift between blocks can be tested.</p>,
       <p key="counts">Count outcomes as they come from the device. Do not correct them for readout, and leave none out: a circuit left out is seen, and the submission is blocked.</p>,
       <p key="file">Put the counts in one dataset file with the same circuit ids, and name this sheet: <code>{`"runSheet": {"id": "${sheet.id}", "sha256": "${sheet.sheetSha256 ?? ''}"}`}</code>.</p>,
