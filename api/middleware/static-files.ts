@@ -17,13 +17,16 @@ const schemaHeaders = (response: Response, path: string): void => {
 /** The open formats under the paths they have in the repository. */
 export const schemaFiles = (root: string): RequestHandler => express.static(root, { index: false, redirect: false, dotfiles: 'ignore', cacheControl: false, setHeaders: schemaHeaders });
 
+/** Addresses of the API, of sign-in, of built files and of published schemas; /schema itself is a page. */
+const notAPage = /^\/(api|auth|assets)(\/|$)|^\/schema\/.*\.(json|md|txt)$/;
+
 /** The built client: hashed assets for a year, the page itself always fresh, any page address answered by it. */
 export const clientFiles = (root: string): Router => {
   const router = Router();
   router.use('/assets', express.static(join(root, 'assets'), { index: false, redirect: false, fallthrough: true, cacheControl: false, setHeaders: (response) => response.set('cache-control', year) }));
   router.use(express.static(root, { index: false, redirect: false, dotfiles: 'ignore', maxAge: '1h' }));
   router.get('/{*path}', (request, response, next) => {
-    if (/^\/(api|auth|schema|assets)(\/|$)/.test(request.path) || !request.accepts('html')) return next();
+    if (notAPage.test(request.path) || !request.accepts('html')) return next();
     const page = join(root, 'index.html');
     if (!existsSync(page)) return next(new AppError('unavailable', 'The pages are not built yet. `npm run build` makes them; the API answers meanwhile.'));
     response.set('cache-control', 'no-cache').sendFile(page);

@@ -1,6 +1,6 @@
 import type { Application } from 'express';
 import pg from 'pg';
-import { pino } from 'pino';
+import { pino, type Logger } from 'pino';
 import { afterAll, beforeAll } from 'vitest';
 import { createApp } from '#api/app.ts';
 import { configFrom, type Config } from '#api/config/config.ts';
@@ -38,8 +38,19 @@ export const testConfig = (databaseUrl: string, more: Record<string, string> = {
 /** The instant at which the clock of a test stands until the test moves it. */
 export const testStart = new Date('2026-05-04T08:00:00Z');
 
+export interface TestAppOptions {
+  settings?: Record<string, string>;
+  /** Instead of the real list. */
+  routes?: readonly Route[];
+  /** Set where a test brings faults about on purpose; otherwise a logged error fails the test with what was logged. */
+  faultsExpected?: boolean;
+}
+
+const testLog = (quiet: boolean): Logger =>
+  quiet ? pino({ level: 'silent' }) : pino({ level: 'error', base: null, timestamp: false }, { write: (line: string) => console.error(line) });
+
 /** Registers an application with its own database for the test file it is called in. */
-export const useTestApp = (options: { settings?: Record<string, string>; routes?: readonly Route[] } = {}): (() => TestApp) => {
+export const useTestApp = (options: TestAppOptions = {}): (() => TestApp) => {
   let made: TestApp | undefined;
   let pool: pg.Pool | undefined;
   beforeAll(async () => {
@@ -48,7 +59,7 @@ export const useTestApp = (options: { settings?: Record<string, string>; routes?
     pool = new pg.Pool({ connectionString: database.url, max: 2 });
     const clock = new SettableClock(testStart);
     const queue = await startQueue(database.url, () => undefined);
-    const deps: Deps = { config, orm: database.orm, pool, queue, threads: startThreads({ threads: 1 }), clock, log: pino({ level: 'silent' }) };
+    const deps: Deps = { config, orm: database.orm, pool, queue, threads: startThreads({ threads: 1 }), clock, log: testLog(options.faultsExpected ?? false) };
     made = { app: createApp(deps, options.routes), deps, clock, database };
   });
   afterAll(async () => {

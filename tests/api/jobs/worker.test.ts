@@ -7,9 +7,9 @@ import { startWorker, type RunningWorker } from '#api/jobs/start-worker.ts';
 import { systemClock } from '#api/lib/clock.ts';
 import { useTestApp } from '#tests/support/test-app.ts';
 
-const test = useTestApp();
+const test = useTestApp({ faultsExpected: true });
 const em = () => test().deps.orm.em.fork();
-const soon = { timeout: 20_000, interval: 50 };
+const soon = { timeout: 60_000, interval: 50 };
 
 let workers: RunningWorker[] = [];
 const work = async (jobs: Job[]): Promise<RunningWorker> => {

@@ -11,8 +11,8 @@ import { deliverMailJob } from '#api/mail/deliver-mail.ts';
 import { queueMail } from '#api/mail/queue-mail.ts';
 import { useTestApp } from '#tests/support/test-app.ts';
 
-const test = useTestApp();
-const soon = { timeout: 20_000, interval: 50 };
+const test = useTestApp({ faultsExpected: true });
+const soon = { timeout: 60_000, interval: 50 };
 const mail = { recipient: 'ida.marsh@larkspur.example', subject: 'Accepted:\r\nBcc: all@evenbeam.example', body: 'Ein Gruß — 96.95\u202f%', topic: 'submission', topicId: 'S-000012' };
 let cleanUp: (() => Promise<void>)[] = [];
 afterEach(async () => {
