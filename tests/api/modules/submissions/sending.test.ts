@@ -1,0 +1,113 @@
+import { beforeAll, describe, expect, it } from 'vitest';
+import { bytesOf, makeDataset, makeDesk, makeDrawnSheet, sendFile, workFor, type Desk } from '#tests/support/record.ts';
+import { addMember, makeOrganisation, makeToken, makeUser } from '#tests/support/people.ts';
+import { asStranger, signInAs, withToken } from '#tests/support/sign-in.ts';
+import { useTestApp } from '#tests/support/test-app.ts';
+import { accepted, receive, stateOf } from '#tests/support/life.ts';
+import { cancelSubmission } from '#api/modules/submissions/service.ts';
+
+const app = useTestApp();
+let desk: Desk;
+let other: Desk;
+beforeAll(async () => {
+  desk = await makeDesk(app());
+  other = await makeDesk(app());
+});
+const address = '/api/v1/submissions';
+
+describe('sending a dataset', () => {
+  it('gives the same answer to the same key and content, and makes one submission', async () => {
+    const bytes = bytesOf(makeDataset(desk, null));
+    const first = await sendFile(desk.client, 'post', address, bytes, { 'idempotency-key': 'once' });
+    const again = await sendFile(desk.client, 'post', address, bytes, { 'idempotency-key': 'once' });
+    expect([first.status, again.status]).toEqual([202, 202]);
+    expect(again.body).toEqual(first.body);
+    expect(again.headers).toMatchObject({ location: first.headers.location as string, 'idempotency-replayed': 'true' });
+  });
+
+  it('refuses a key that was used for another body', async () => {
+    await sendFile(desk.client, 'post', address, bytesOf(makeDataset(desk, null)), { 'idempotency-key': 'twice' });
+    const answer = await sendFile(desk.client, 'post', address, bytesOf(makeDataset(desk, null)), { 'idempotency-key': 'twice' });
+    expect(answer.body).toMatchObject({ status: 422, code: 'idempotency-mismatch' });
+  });
+
+  it('gives two requests at the same instant one submission and one answer', async () => {
+    const bytes = bytesOf(makeDataset(desk, null));
+    const answers = await Promise.all([1, 2, 3].map(() => sendFile(desk.client, 'post', address, bytes, { 'idempotency-key': 'race' })));
+    expect(answers.map((a) => a.status)).toEqual([202, 202, 202]);
+    expect(new Set(answers.map((a) => (a.body as { id: string }).id)).size).toBe(1);
+  });
+
+  it('lets two organisations use the same key', async () => {
+    const mine = await sendFile(desk.client, 'post', address, bytesOf(makeDataset(desk, null)), { 'idempotency-key': 'shared' });
+    const theirs = await sendFile(other.client, 'post', address, bytesOf(makeDataset(other, null)), { 'idempotency-key': 'shared' });
+    expect([mine.status, theirs.status]).toEqual([202, 202]);
+  });
+
+  it('answers 409 for content that is live, however it is spelled, and names it only to its own organisation', async () => {
+    const dataset = makeDataset(desk, null);
+    const id = await receive(app(), desk, dataset);
+    const mine = await sendFile(desk.client, 'post', address, Buffer.from(JSON.stringify(dataset)), { 'idempotency-key': 'same-1' });
+    expect(mine.body).toMatchObject({ status: 409, code: 'duplicate-content' });
+    expect((mine.body as { detail: string }).detail).toContain(id);
+    const theirs = await sendFile(other.client, 'post', address, bytesOf(dataset), { 'idempotency-key': 'same-2' });
+    expect(theirs.body).toMatchObject({ status: 409, code: 'duplicate-content' });
+    expect((theirs.body as { detail: string }).detail).not.toMatch(/S-\d/);
+    await cancelSubmission(await workFor(app(), desk.contributor), id);
+    const later = await sendFile(desk.client, 'post', address, bytesOf(dataset), { 'idempotency-key': 'same-3' });
+    expect(later.status).toBe(202);
+  });
+
+  it('answers 409 for a second dataset of one run sheet until the first is cancelled', async () => {
+    const sheet = await makeDrawnSheet(app(), desk);
+    const id = await receive(app(), desk, makeDataset(desk, sheet));
+    const second = await sendFile(desk.client, 'post', address, bytesOf(makeDataset(desk, sheet)), { 'idempotency-key': 'sheet-1' });
+    expect(second.body).toMatchObject({ status: 409, code: 'already-exists' });
+    expect((await desk.client('get', `/api/v1/run-sheets/${sheet.id}`)).body).toMatchObject({ submission: id });
+    await cancelSubmission(await workFor(app(), desk.contributor), id);
+    expect((await sendFile(desk.client, 'post', address, bytesOf(makeDataset(desk, sheet)), { 'idempotency-key': 'sheet-2' })).status).toBe(202);
+  });
+
+  it('takes an API token of the organisation and writes down for whom it acted', async () => {
+    const em = app().deps.orm.em.fork();
+    const script = withToken(app(), await makeToken(em, desk.organisation, desk.contributor));
+    const answer = await sendFile(script, 'post', address, bytesOf(makeDataset(desk, null)), { 'idempotency-key': 'token' });
+    expect(answer.status).toBe(202);
+    const seen = await script('get', `${address}/${(answer.body as { id: string }).id}`);
+    expect(seen.body).toMatchObject({ organisation: { id: desk.organisation.id }, history: [{ state: 'draft', by: `${desk.contributor.name}, by API token “script”` }, { state: 'checking', by: null }] });
+  });
+
+  it('asks for the organisation where the caller contributes to two', async () => {
+    const em = app().deps.orm.em.fork();
+    const user = await makeUser(em);
+    const [a, b] = [await makeOrganisation(em), await makeOrganisation(em)];
+    await addMember(em, user, a);
+    await addMember(em, user, b);
+    const client = await signInAs(app(), user);
+    const bytes = bytesOf(makeDataset({ ...desk, organisation: a }, null));
+    expect((await sendFile(client, 'post', address, bytes, { 'idempotency-key': 'o1' })).body).toMatchObject({ status: 400, code: 'invalid-request' });
+    expect((await sendFile(client, 'post', `${address}?organisation=${a.id}`, bytes, { 'idempotency-key': 'o2' })).status).toBe(202);
+    expect((await sendFile(client, 'post', `${address}?organisation=${desk.organisation.id}`, bytes, { 'idempotency-key': 'o3' })).body).toMatchObject({ status: 403 });
+  });
+
+  it('is closed to strangers, to other organisations and to curators', async () => {
+    const bytes = bytesOf(makeDataset(desk, null));
+    const id = await receive(app(), desk, makeDataset(desk, null));
+    expect((await sendFile(asStranger(app()), 'post', address, bytes, { 'idempotency-key': 'x' })).status).toBe(401);
+    expect((await sendFile(desk.curatorClient, 'post', address, bytes, { 'idempotency-key': 'x' })).status).toBe(403);
+    for (const [method, path, body] of [['get', ''], ['get', '/dataset'], ['patch', '', { notes: 'x' }], ['post', '/submit'], ['post', '/cancel'], ['post', '/messages', { body: 'x' }]] as const) {
+      const request = other.client(method, `${address}/${id}${path}`);
+      expect((await (body ? request.send(body) : request)).status, `${method} ${path}`).toBe(403);
+    }
+    expect(await stateOf(app(), id)).toBe('checking');
+  });
+
+  it('refuses a correction of an entry of another device, register or organisation', async () => {
+    const { accession } = await accepted(app(), desk, makeDataset(desk, await makeDrawnSheet(app(), desk)));
+    const strange = bytesOf(makeDataset(desk, null, { register: ['q9'] }));
+    const wrong = await sendFile(desk.client, 'post', `${address}?correctionOf=${accession}`, strange, { 'idempotency-key': 'c1' });
+    expect((wrong.body as { detail: string }).detail).toContain('the register is q9, not q3');
+    const foreign = await sendFile(other.client, 'post', `${address}?correctionOf=${accession}`, bytesOf(makeDataset(other, null)), { 'idempotency-key': 'c2' });
+    expect(foreign.body).toMatchObject({ status: 400, code: 'invalid-request' });
+  });
+});
