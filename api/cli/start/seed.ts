@@ -1,14 +1,7 @@
-import { existsSync } from 'node:fs';
-import { pathToFileURL } from 'node:url';
-import { resolve } from 'node:path';
 import pg from 'pg';
 import type { Config } from '#api/config/config.ts';
 
-type SeedDemo = (options: { config: Config; progress: (line: string) => void }) => Promise<void>;
-
-const module = 'api/demo/seed.ts';
-
-/** Has any entry been made yet? */
+/** Has any entry been made yet? The demo comes whole or not at all, so one entry means that it is there. */
 export const isEmpty = async (databaseUrl: string): Promise<boolean> => {
   const client = new pg.Client({ connectionString: databaseUrl });
   await client.connect();
@@ -22,8 +15,9 @@ export const isEmpty = async (databaseUrl: string): Promise<boolean> => {
 
 /** Fills an empty registry with the demo registry, through the same services as anyone's data. */
 export const seedIfEmpty = async (config: Config, say: (line: string) => void): Promise<void> => {
-  if (!existsSync(module) || !(await isEmpty(config.databaseUrl))) return;
-  say('Filling the registry with the demo data (once) …');
-  const { seedDemo } = (await import(pathToFileURL(resolve(module)).href)) as { seedDemo: SeedDemo };
-  await seedDemo({ config, progress: (line) => say(`  ${line}`) });
+  if (!(await isEmpty(config.databaseUrl))) return;
+  say('Filling the registry with the demo data (once; an interrupted start begins it anew) …');
+  // Loaded only when needed: later starts do not wait for it.
+  const { seedDemo } = await import('#api/demo/seed.ts');
+  await seedDemo({ config, progress: (words, share) => say(`  ${String(Math.floor(100 * share)).padStart(3)} %  ${words}`) });
 };
