@@ -32,7 +32,7 @@ const buildServer = async (): Promise<void> => {
 };
 
 const buildWeb = async (): Promise<void> => {
-  await buildClient({ configFile: 'web/vite.config.ts', logLevel: 'warn' });
+  await buildClient({ configFile: 'web/vite.config.ts', logLevel: 'error' });
 };
 
 /** Builds client and server into dist/, each only if its sources changed since the last time. Returns what was built. */

@@ -96,10 +96,15 @@ const start = async (): Promise<KeptChild[]> => {
     await registerPeople(orm.em.fork(), inventedSince);
     await orm.close(true);
   }
-  if (settings.DEMO ?? database.own) await step(seedIfEmpty(configFrom({ ...env, LOG_LEVEL: 'warn' }), say));
   await step(buildAll(say));
 
   const built = { ...env, THREAD_FILE: resolve('dist/api/thread.js') };
+  if (settings.DEMO ?? database.own) {
+    // Filling is all or nothing, so a stop need not wait for its end.
+    const filling = seedIfEmpty(configFrom({ ...built, LOG_LEVEL: 'warn' }), say);
+    filling.catch(() => undefined);
+    await step(Promise.race([filling, told]));
+  }
   const children = (['server', 'worker'] as const).map((name) => keepRunning(name === 'server' ? 'web' : name, resolve(`dist/api/${name}.js`), built, join(dataDir, 'logs', `${name}.log`), say));
   for (const child of children) started.push(() => child.stop());
   await step(Promise.all(children.map((child) => child.ready)));
@@ -112,6 +117,12 @@ const start = async (): Promise<KeptChild[]> => {
   return children;
 };
 
+// What a stop cuts off may still complain; a fault before that is real.
+process.on('uncaughtException', (fault) => {
+  if (wasTold) return;
+  console.error(fault);
+  void end(1);
+});
 const setUp = start();
 setUp.catch(() => undefined);
 try {
