@@ -5,7 +5,7 @@ import { summarise, type DatasetSummary } from './dataset-summary.ts';
 import { gunzipBounded } from './gunzip-bounded.ts';
 
 export type FileReading =
-  | { ok: true; gzip: boolean; summary: DatasetSummary; contentId: string }
+  | { ok: true; gzip: boolean; summary: DatasetSummary; contentId: string; bytesSha256: string }
   | { ok: false; errors: readonly ErrorDetail[] };
 
 const refused = (message: string): FileReading => ({ ok: false, errors: [{ pointer: '', message }] });
@@ -19,7 +19,7 @@ export async function readDatasetFile(file: Blob): Promise<FileReading> {
   if (!gzip && file.size > limits.bytes) return refused(`The file is larger than ${limits.bytes / 2 ** 20} MiB; that is the most allowed.`);
   try {
     const reading = readDataset(gzip ? await gunzipBounded(file) : new Uint8Array(await file.arrayBuffer()));
-    return reading.ok ? { ok: true, gzip, summary: summarise(reading.dataset), contentId: reading.contentId } : reading;
+    return reading.ok ? { ok: true, gzip, summary: summarise(reading.dataset), contentId: reading.contentId, bytesSha256: reading.bytesSha256 } : reading;
   } catch (error) {
     if (error instanceof AppError) return refused(error.message);
     throw error;

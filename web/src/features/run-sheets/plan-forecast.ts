@@ -5,8 +5,11 @@ import { formatCount } from '#shared/domain/format.ts';
 import { totalShots } from './sheet-size.ts';
 import type { UnitFigure, UnitForecast } from './unit-forecast.ts';
 
-/** Sample sheets looked at for each number of circuits: sheets of 200 circuits differ by a third, so one would mislead. */
-export const sampleSheets = 5;
+/**
+ * Sample sheets looked at for each number of circuits. Widths of single sheets of 200 circuits lie anywhere within a factor of two,
+ * so one would mislead; a root mean square over seven also keeps the search for the cheapest plan from following a lucky draw.
+ */
+export const sampleSheets = 7;
 
 /** The depth at which plans are compared: that of the headline figure. */
 export const headlineDepth = 16;
@@ -14,10 +17,10 @@ export const headlineDepth = 16;
 const headline = (unit: UnitForecast): UnitFigure['halfWidth'] => unit.figures.find((f) => f.key === 'retained-signal' && f.depth === headlineDepth)?.halfWidth ?? null;
 
 /** Half-width of the headline figure with so many shots a circuit; null where it is not determined. */
-export const headlineWidth = (unit: UnitForecast, shots: number): { median: number; least: number; most: number } | null => {
+export const headlineWidth = (unit: UnitForecast, shots: number): { typical: number; least: number; most: number } | null => {
   const width = headline(unit);
   const root = Math.sqrt(shots);
-  return width && { median: width.median / root, least: width.least / root, most: width.most / root };
+  return width && { typical: width.typical / root, least: width.least / root, most: width.most / root };
 };
 
 export interface CheapPlan extends PlannerPoint {
@@ -34,10 +37,10 @@ export const cheapestPlan = (gateClass: GateClassSummary, units: Iterable<UnitFo
   for (const unit of units) {
     const width = headline(unit);
     if (!width || unit.circuits < gateClass.floor.circuits) continue;
-    const shotsEach = Math.max(gateClass.floor.shots, tens((width.median / wanted) ** 2));
+    const shotsEach = Math.max(gateClass.floor.shots, tens((width.typical / wanted) ** 2));
     if (shotsEach > mostShots) continue;
     const shots = totalShots(gateClass, unit.circuits, shotsEach);
-    if (best === null || shots < best.shots) best = { circuits: unit.circuits, shotsEach, shots, halfWidth: width.median / Math.sqrt(shotsEach) };
+    if (best === null || shots < best.shots) best = { circuits: unit.circuits, shotsEach, shots, halfWidth: width.typical / Math.sqrt(shotsEach) };
   }
   return best;
 };
@@ -67,7 +70,7 @@ export const plannerCurves = (gateClass: GateClassSummary, units: ReadonlyMap<nu
     if (!width || lower >= upper) return [];
     const points = Array.from({ length: pointsOnCurve }, (_, i) => {
       const shots = lower * (upper / lower) ** (i / (pointsOnCurve - 1));
-      return { shots: Math.round(shots), halfWidth: width.median / Math.sqrt(shots / perShot) };
+      return { shots: Math.round(shots), halfWidth: width.typical / Math.sqrt(shots / perShot) };
     });
     return [{ name: `${formatCount(circuits)} circuits`, points, main: circuits === plan.circuits }];
   });

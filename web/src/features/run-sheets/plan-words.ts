@@ -41,7 +41,7 @@ export interface ForecastRow {
 export const forecastRows = (unit: UnitForecast, shots: number, gates: GateClassSummary['gates']): ForecastRow[] =>
   unit.figures.filter((f) => f.key !== 'retained-signal' || f.depth === headlineDepth).map((f) => ({
     name: figureName(f, gates.find((g) => g.label === f.gate)?.words),
-    width: f.halfWidth ? widthWords(f.halfWidth.median / Math.sqrt(shots)) : null,
+    width: f.halfWidth ? widthWords(f.halfWidth.typical / Math.sqrt(shots)) : null,
     dependsOn: dependsOn[f.key] ?? '',
     headline: f.key === 'retained-signal',
   }));

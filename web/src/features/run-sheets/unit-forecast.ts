@@ -10,8 +10,8 @@ export interface UnitFigure {
   key: FigureKey;
   depth: number | null;
   gate: string | null;
-  /** Median over the sample sheets, with the narrowest and the widest of them; null = not determined by any. */
-  halfWidth: { median: number; least: number; most: number } | null;
+  /** Root mean square over the sample sheets, with the narrowest and the widest of them; null = not determined by any. */
+  halfWidth: { typical: number; least: number; most: number } | null;
 }
 
 /** What sheets of so many circuits promise, seen on a few sample sheets. */
@@ -43,12 +43,12 @@ const middle = (values: readonly number[]): number => {
 
 const spread = (errors: readonly (number | null)[]): UnitFigure['halfWidth'] => {
   const known = errors.filter((e) => e !== null).map((e) => e * z95);
-  return known.length === 0 ? null : { median: middle(known), least: Math.min(...known), most: Math.max(...known) };
+  return known.length === 0 ? null : { typical: Math.sqrt(known.reduce((sum, w) => sum + w * w, 0) / known.length), least: Math.min(...known), most: Math.max(...known) };
 };
 
 /**
  * Half-widths for sheets of a one-qubit class, before any is drawn: `forecast` on a few sample sheets. Deterministic; the
- * sample seeds have nothing to do with the registry's. Cost: 5 forecasts of 20 to 120 ms each.
+ * sample seeds have nothing to do with the registry's. Cost: 7 forecasts of 20 to 120 ms each.
  */
 export function unitForecast(gateClass: GateClass, circuits: number, readoutError: number): UnitForecast {
   const seen: Forecast[] = Array.from({ length: sampleSheets }, (_, i) =>

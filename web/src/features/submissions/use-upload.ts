@@ -10,7 +10,7 @@ import { dropKey, keyForFile } from './idempotency.ts';
 export interface Package {
   file: File;
   gzip: boolean;
-  contentId: string;
+  bytesSha256: string;
 }
 
 /** Where a file goes: a new submission of an organisation, or the next round of one that exists. */
@@ -31,25 +31,25 @@ export function useUpload(target: Target) {
   const [share, setShare] = useState(0);
   const stopper = useRef<AbortController | null>(null);
   const send = useMutation({
-    mutationFn: async ({ file, gzip, contentId }: Package) => {
+    mutationFn: async ({ file, gzip, bytesSha256 }: Package) => {
       setShare(0);
       stopper.current = new AbortController();
       const { csrfToken } = await client.fetchQuery(meQuery());
       const { method, address, owner } = addressOf(target);
       return uploadDataset({
         method, address, body: file, gzip, csrfToken, onProgress: setShare, signal: stopper.current.signal,
-        headers: { 'content-disposition': disposition(file.name) }, idempotencyKey: keyForFile(sessionStorage, owner, contentId),
+        headers: { 'content-disposition': disposition(file.name) }, idempotencyKey: keyForFile(sessionStorage, owner, bytesSha256),
       });
     },
-    onSuccess: async (accepted, { contentId }) => {
-      dropKey(sessionStorage, addressOf(target).owner, contentId);
+    onSuccess: async (accepted, { bytesSha256 }) => {
+      dropKey(sessionStorage, addressOf(target).owner, bytesSha256);
       await client.invalidateQueries({ queryKey: ['submissions'] });
       await client.invalidateQueries({ queryKey: submissionQuery(accepted.id).queryKey });
       await navigate(`/desk/submissions/${accepted.id}`);
     },
-    onError: (error, { contentId }) => {
+    onError: (error, { bytesSha256 }) => {
       // A refusal by name is an answer too: what was refused under this key would be refused again.
-      if (asApiError(error).fault === 'problem' && asApiError(error).status < 500) dropKey(sessionStorage, addressOf(target).owner, contentId);
+      if (asApiError(error).fault === 'problem' && asApiError(error).status < 500) dropKey(sessionStorage, addressOf(target).owner, bytesSha256);
     },
   });
   return { send, share, stop: () => stopper.current?.abort() };

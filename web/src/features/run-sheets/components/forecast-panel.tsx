@@ -30,11 +30,11 @@ export function ForecastPanel({ plan, gateClass, forecast, climbed, cheapest }: 
   return (
     <>
       <p className="opening" role="status">
-        This plan costs <b>{formatCount(cost)} shots</b>{width ? <> and would leave retained signal at depth 16 uncertain by <b className="nowrap">{widthWords(width.median)}</b>. <WantedWords plan={plan} width={width.median} climbed={climbed} cheapest={cheapest} /></> : unit ? '. Retained signal at depth 16 is not determined by this gate set.' : '. The forecast is being worked out.'}
+        This plan costs <b>{formatCount(cost)} shots</b>{width ? <> and would leave retained signal at depth 16 uncertain by <b className="nowrap">{widthWords(width.typical)}</b>. <WantedWords plan={plan} width={width.typical} climbed={climbed} cheapest={cheapest} /></> : unit ? '. Retained signal at depth 16 is not determined by this gate set.' : '. The forecast is being worked out.'}
       </p>
       {width ? <p className="says">Sheets differ by chance: of {countInWords(sampleSheets)} drawn like this one the narrowest gave {widthWords(width.least)}, the widest {widthWords(width.most)}.</p> : null}
       {unit && curves.length > 0 ? (
-        <PlannerChart curves={curves} plan={width ? { shots: cost, halfWidth: width.median } : null} wanted={plan.wanted} cheapest={cheapest} fileName="run-sheet-plan" />
+        <PlannerChart curves={curves} plan={width ? { shots: cost, halfWidth: width.typical } : null} wanted={plan.wanted} cheapest={cheapest} fileName="run-sheet-plan" />
       ) : null}
       {unit ? <ForecastTable rows={forecastRows(unit, plan.shots, gateClass.gates)} /> : null}
       {unit ? <PlanFacts gateClass={gateClass} plan={plan} rank={unit.rank} ratio={unit.conditionRatio} /> : null}

@@ -13,7 +13,7 @@ import { UploadFault } from './upload-fault.tsx';
 /** Takes a file, reads it in this browser, shows what it holds or what is wrong with it, and sends it when told to. */
 export function DatasetSender({ target, action }: { target: Target; action: string }) {
   const { state, choose, clear } = useFileReading();
-  const sound = state.stage === 'read' && state.reading.ok ? { pack: { file: state.file, gzip: state.reading.gzip, contentId: state.reading.contentId }, summary: state.reading.summary } : null;
+  const sound = state.stage === 'read' && state.reading.ok ? { pack: { file: state.file, gzip: state.reading.gzip, bytesSha256: state.reading.bytesSha256 }, summary: state.reading.summary } : null;
   const upload = useUpload(target);
   const chooseNew = (file: File): void => {
     upload.send.reset();
