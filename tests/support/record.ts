@@ -12,7 +12,8 @@ import { canonicalJson, sha256Hex } from '#shared/formats/canonical-json.ts';
 import type { Dataset, DatasetCircuit, RunSheet, SheetCircuit } from '#shared/formats/types.ts';
 import { binomial } from '#shared/random/binomial.ts';
 import { Xoshiro256 } from '#shared/random/xoshiro256.ts';
-import { commitmentOf, openSeal } from '#shared/runsheet/seal.ts';
+import { drawSheet } from '#shared/runsheet/draw-sheet.ts';
+import { openSeal } from '#shared/runsheet/seal.ts';
 import { makeContributor, makeCurator } from './people.ts';
 import { signInAs, type Client } from './sign-in.ts';
 import type { TestApp } from './test-app.ts';
@@ -71,12 +72,15 @@ export const makeDrawnSheet = async (app: TestApp, desk: Desk, given: { circuits
   const { circuits = 200, shots = 500, seed = (serial += 1) } = given;
   const work = await workFor(app, desk.contributor);
   const { id } = await createRunSheet(work, { device: desk.device.id, gateClass: 'quarter-turn-1q/1', register: ['q3'], circuits: 200, shots });
-  const secret = Uint8Array.from({ length: 32 }, (_, i) => (seed * 53 + i * 17 + 5) % 256);
-  const sealed = Math.ceil(circuits / 4);
-  const sheet: RunSheet = {
-    format: 'evenbeam.run-sheet', formatVersion: '1.0.0', id, gateClass: 'quarter-turn-1q/1', device: { provider: desk.organisation.name, name: desk.device.name }, register: ['q3'], gates: structuredClone(quarterTurns().gates), shots,
-    seed: String(seed).padStart(64, '0'), sealSha256: commitmentOf(secret), patches: [{ qubits: [0], sealed, circuits: drawCircuits(circuits + sealed, seed) }], drawnAt: app.clock.now().toISOString(),
-  };
+  let secrets = seed;
+  const drawn = drawSheet({
+    gateClass: quarterTurns(), register: ['q3'], circuits, shots, seed: String(seed).padStart(64, '0'),
+    issued: { id, device: { provider: desk.organisation.name, name: desk.device.name }, drawnAt: app.clock.now().toISOString() },
+    newSecret: () => Uint8Array.from({ length: 32 }, (_, i) => ((secrets += 1) * 53 + i * 17 + 5) % 256),
+  });
+  const { sheet, secret } = drawn;
+  if (!secret) throw new Error('The sheet has no seal.');
+  const sealed = sheet.patches[0]?.sealed ?? 0;
   const bytes = new TextEncoder().encode(canonicalJson(sheet));
   const sha256 = sha256Hex(bytes);
   await work.em.transactional(async (em) => {

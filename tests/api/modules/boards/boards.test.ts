@@ -1,0 +1,83 @@
+import { beforeAll, describe, expect, it } from 'vitest';
+import { board as boardContract, type Board } from '#shared/contracts/boards.ts';
+import { device as deviceContract } from '#shared/contracts/devices.ts';
+import { makeDataset, makeDesk, makeDrawnSheet, type Desk } from '#tests/support/record.ts';
+import { accepted } from '#tests/support/life.ts';
+import { asStranger } from '#tests/support/sign-in.ts';
+import { useTestApp } from '#tests/support/test-app.ts';
+
+const app = useTestApp();
+const desks: Desk[] = [];
+const accession: Record<string, string> = {};
+const ran = (endedAt: string) => ({ acquisition: { startedAt: endedAt, endedAt, software: 'in-house 1.4' } });
+
+beforeAll(async () => {
+  for (let i = 0; i < 3; i += 1) desks.push(await makeDesk(app()));
+  const [a, b, c] = desks as [Desk, Desk, Desk];
+  const freeze = async (name: string, desk: Desk, keep: number, more: object = {}, sheet: { circuits?: number } | null = {}): Promise<void> => {
+    accession[name] = (await accepted(app(), desk, makeDataset(desk, sheet && (await makeDrawnSheet(app(), desk, sheet)), { keep, ...more }), { replicates: 200 })).accession;
+  };
+  await freeze('middle', a, 0.99);
+  await freeze('best', b, 0.999);
+  await freeze('worst', c, 0.98);
+  await freeze('older', b, 0.9995, ran('2026-04-01T10:00:00Z'));
+  await freeze('otherQubit', b, 0.97, { register: ['q8'] }, null);
+  await freeze('small', c, 0.999, { register: ['q3'], ...ran('2026-03-01T10:00:00Z') }, { circuits: 150 });
+});
+
+const read = async (query = ''): Promise<Board> => boardContract.parse((await asStranger(app())('get', `/api/v1/boards/quarter-turn-1q/1${query}`)).body);
+const names = (rows: { accession: string }[]): string[] => rows.map((r) => Object.entries(accession).find(([, a]) => a === r.accession)?.[0] ?? '');
+const reasonsOf = (board: Board, name: string): string[] => board.notListed.find((r) => r.row.accession === accession[name])?.reasons.map((r) => r.code) ?? [];
+
+describe('a board', () => {
+  it('lists the newest eligible entry of each device by estimate, best first', async () => {
+    const board = await read();
+    expect(names(board.rows)).toEqual(['best', 'middle', 'worst']);
+    const values = board.rows.map((r) => r.figure.value ?? 0);
+    expect(values).toEqual([...values].sort((x, y) => y - x));
+    expect(Object.keys(board.rows[0] ?? {})).not.toContain('rank');
+  });
+
+  it('names every other entry with all reasons and a remedy for each', async () => {
+    const board = await read();
+    expect(names(board.notListed.map((r) => r.row)).sort()).toEqual(['older', 'otherQubit', 'small']);
+    expect(reasonsOf(board, 'older')).toEqual(['newer']);
+    expect(reasonsOf(board, 'otherQubit')).toEqual(['own-design']);
+    expect(reasonsOf(board, 'small')).toEqual(['floor', 'newer']);
+    for (const { reasons } of board.notListed) for (const reason of reasons) expect([reason.sentence, reason.remedy].every((text) => /^[A-Z0-9].*\.$/.test(text)), JSON.stringify(reason)).toBe(true);
+  });
+
+  it('read by a figure where less is better turns round, and filters leave the order alone', async () => {
+    expect(names((await read('?figure=output-error-16')).rows)).toEqual(['best', 'middle', 'worst']);
+    const worst = await read(`?provider=${desks[2]?.organisation.slug}`);
+    expect(names(worst.rows)).toEqual(['worst']);
+    expect(worst.filters.providers).toHaveLength(3);
+    expect((await read('?modality=photonic')).rows).toEqual([]);
+    expect(reasonsOf(await read('?within=20'), 'older')).toEqual(['newer', 'old']);
+  });
+
+  it('is 404 for a class that does not exist and 400 for a figure that is none', async () => {
+    const reader = asStranger(app());
+    expect((await reader('get', '/api/v1/boards/quarter-turn-1q/9')).status).toBe(404);
+    expect((await reader('get', '/api/v1/boards/quarter-turn-1q/1?figure=speed')).body).toMatchObject({ status: 400, code: 'invalid-request' });
+  });
+});
+
+describe('lists of boards, classes and a device', () => {
+  it('count entries and eligible ones, and name every class with its floor', async () => {
+    const reader = asStranger(app());
+    const boards = (await reader('get', '/api/v1/boards')).body as { items: { gateClass: { id: string }; entries: number; eligible: number }[] };
+    expect(boards.items.find((b) => b.gateClass.id === 'quarter-turn-1q/1')).toMatchObject({ entries: 6, eligible: 3 });
+    const classes = (await reader('get', '/api/v1/gate-classes')).body as { items: { id: string; href: string; gates: { words: string }[] }[] };
+    expect(classes.items).toHaveLength(8);
+    expect(classes.items[0]).toMatchObject({ id: 'quarter-turn-1q/1', href: '/schema/gate-class/quarter-turn-1q/1.json', floor: { circuits: 200, shots: 500 }, gates: [{ words: 'identity' }, { words: 'rx(π/2)' }, { words: 'ry(π/2)' }] });
+  });
+
+  it('a device tells its entries oldest first with the headline of each', async () => {
+    const { body } = await asStranger(app())('get', `/api/v1/devices/${desks[1]?.device.id}`);
+    const told = deviceContract.parse(body);
+    expect(names(told.history)).toEqual(['older', 'best', 'otherQubit']);
+    expect(told.entries).toBe(3);
+    expect(told.history.every((h) => h.headline?.depth === 16)).toBe(true);
+  });
+});
