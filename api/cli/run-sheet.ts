@@ -75,17 +75,25 @@ function sheetText({ gateClass, circuits, shots, seed }: Options): string {
   return `{\n${lines.join(',\n')},\n  "patches": [\n${blocks.join(',\n')}\n  ]\n}\n`;
 }
 
+/** Where a command prints: standard output and standard error. */
+interface Printing {
+  out: (text: string) => void;
+  err: (text: string) => void;
+}
+
+const toProcess: Printing = { out: (text) => void process.stdout.write(text), err: (text) => void process.stderr.write(text) };
+
 /** Runs the command and returns its exit code. Nothing is written unless the whole sheet was drawn. */
-export function runSheetCommand(args: string[]): number {
+export function runSheetCommand(args: string[], print: Printing = toProcess): number {
   try {
     const options = optionsFrom(args);
     if (options === 'help') {
-      process.stdout.write(usage);
+      print.out(usage);
       return 0;
     }
     const text = sheetText(options);
     if (options.out === null) {
-      process.stdout.write(text);
+      print.out(text);
       return 0;
     }
     try {
@@ -96,7 +104,7 @@ export function runSheetCommand(args: string[]): number {
     return 0;
   } catch (error) {
     if (!(error instanceof Refusal || error instanceof AppError)) throw error;
-    process.stderr.write(`${error.message}\n${error instanceof BadArgument ? `\n${usage}` : ''}`);
+    print.err(`${error.message}\n${error instanceof BadArgument ? `\n${usage}` : ''}`);
     return 2;
   }
 }

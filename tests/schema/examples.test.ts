@@ -37,6 +37,11 @@ describe('examples beside the schemas', () => {
     expect(result.predictions.map(({ id }) => id)).toEqual(circuits.circuits.map(({ id }) => id));
   });
 
+  test('the dataset printed in the guide is valid', () => {
+    const printed = /```json\n([^`]*)```/.exec(readFileSync(new URL('README.md', folder), 'utf8'))?.[1] ?? '';
+    must(readDataset(new TextEncoder().encode(printed)));
+  });
+
   test('the digests that the guide prints are those of the examples', () => {
     const guide = readFileSync(new URL('README.md', folder), 'utf8');
     expect(guide).toContain(contentIdOf(JSON.parse(readFileSync(new URL('dataset/examples/one-qubit.json', folder), 'utf8'))));
