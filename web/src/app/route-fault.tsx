@@ -10,7 +10,7 @@ export function RouteFault() {
   return (
     <Wrap>
       <PageHead title="This page failed" />
-      <FaultState error={error} what="This page" onRetry={() => window.location.reload()} />
+      <FaultState level={2} error={error} what="This page" onRetry={() => window.location.reload()} />
     </Wrap>
   );
 }

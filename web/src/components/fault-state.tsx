@@ -1,11 +1,11 @@
 import type { ApiError } from '#web/lib/api-error.ts';
-import { BlankState } from './blank-state.tsx';
+import { BlankState, type HeadingLevel } from './blank-state.tsx';
 import { Button } from './button.tsx';
 
 /** A read that failed: "The board could not be read", why, and a way to try again. */
-export function FaultState({ error, what, onRetry }: { error: ApiError; what: string; onRetry?: () => void }) {
+export function FaultState({ error, what, onRetry, level = 3 }: { error: ApiError; what: string; onRetry?: () => void; level?: HeadingLevel }) {
   return (
-    <BlankState title={`${what} could not be read`} live
+    <BlankState title={`${what} could not be read`} live level={level}
       act={<>
         {onRetry ? <Button onClick={onRetry}>Try again</Button> : null}
         {error.reference ? <span className="small quiet">Reference {error.reference}</span> : null}

@@ -32,8 +32,8 @@ export function Component() {
         {query.data ? <BoardHead board={query.data} /> : <PageHead above={<Link to="/boards">Boards</Link>} title={query.isError ? 'Board' : gateClass} />}
         <BoardFilters filters={query.data?.filters} />
         <section className="boardsec" aria-label="The board" aria-busy={query.isFetching || undefined}>
-          <Read query={query} what="The board" loading="Loading the board" rows={8}
-            missing={<EmptyState title="There is no such gate class" act={<Link className="btn" to="/boards">All boards</Link>}>{`No board has the gate class ${gateClass}.`}</EmptyState>}>
+          <Read level={2} query={query} what="The board" loading="Loading the board" rows={8}
+            missing={<EmptyState level={2} title="There is no such gate class" act={<Link className="btn" to="/boards">All boards</Link>}>{`No board has the gate class ${gateClass}.`}</EmptyState>}>
             {(board) => <BoardBody board={board} />}
           </Read>
         </section>

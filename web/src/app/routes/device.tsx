@@ -35,7 +35,7 @@ function DevicePage({ device }: { device: Device }) {
         </Section>
       ))}
       {groups.length === 0 ? <Section title="Entries"><BlankState title="No public entry yet">Its first entry will stand here once a curator has accepted it.</BlankState></Section> : null}
-      <Section title="Caution"><Caution /></Section>
+      <Section title="How to read this"><Caution /></Section>
     </>
   );
 }
@@ -46,7 +46,7 @@ export function Component() {
   return (
     <Wrap>
       {query.data ? null : <PageHead above={<Link to="/devices">Devices</Link>} title="Device" />}
-      <Read query={query} what="The device" loading="Loading the device" missing={<EmptyState title="There is no such device" act={<Link className="btn" to="/devices">All devices</Link>}>{`No device has the address ${id}.`}</EmptyState>}>
+      <Read level={2} query={query} what="The device" loading="Loading the device" missing={<EmptyState level={2} title="There is no such device" act={<Link className="btn" to="/devices">All devices</Link>}>{`No device has the address ${id}.`}</EmptyState>}>
         {(device) => <DevicePage device={device} />}
       </Read>
     </Wrap>

@@ -25,8 +25,8 @@ export function Component() {
   return (
     <Wrap>
       <PageHead title={params.accession ?? 'Entry'} />
-      <Read query={query} what="The entry" loading="Loading the entry" rows={6}
-        missing={<EmptyState title="There is no such entry" act={<Link className="btn" to="/find">Find a device, provider or entry</Link>}>{query.error?.message ?? ''}</EmptyState>}>
+      <Read level={2} query={query} what="The entry" loading="Loading the entry" rows={6}
+        missing={<EmptyState level={2} title="There is no such entry" act={<Link className="btn" to="/find">Find a device, provider or entry</Link>}>{query.error?.message ?? ''}</EmptyState>}>
         {() => null}
       </Read>
     </Wrap>

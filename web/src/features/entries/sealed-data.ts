@@ -15,6 +15,8 @@ export interface SealedDrawing {
   residual: { x: Axis; y: Axis };
   /** Edge of the grey range in the stretched plot, upper then lower. */
   ellipse: { fill: string; upper: string; lower: string };
+  /** Its highest point, per cent of the plot: its name stands there. */
+  ellipseTop: number;
   table: ChartTable;
 }
 
@@ -46,6 +48,7 @@ export function sealedDrawing(sealed: readonly SealedPoint[]): SealedDrawing {
     share,
     residual: { x, y },
     ellipse: { fill: `${upper}${edge(-1, [...steps].reverse()).replace('M', 'L')}Z`, upper, lower },
+    ellipseTop: y.at(noise(0.5, shots)),
     table: {
       caption: 'Sealed circuits, predicted and observed',
       columns: [{ head: 'Circuit', csv: 'circuit' }, { head: 'Length', csv: 'length', numeric: true }, { head: 'Shots', csv: 'shots', numeric: true }, { head: 'Outcome', csv: 'outcome' }, { head: 'Predicted', csv: 'predicted', numeric: true }, { head: 'Observed', csv: 'observed', numeric: true }, { head: 'Difference', csv: 'difference', numeric: true }],

@@ -47,6 +47,9 @@ export interface FieldGroup {
 const nameOf = (ref: string): string => ref.slice(ref.lastIndexOf('/') + 1);
 const words: Readonly<Record<string, string>> = { string: 'text', integer: 'whole number', number: 'number', boolean: 'true or false', object: 'object', array: 'list', null: 'null' };
 
+/** "whole numbers", "gate objects". */
+const severalOf = (kind: string, object: boolean): string => (object ? `${kind} objects` : kind.startsWith('list') ? kind.replace('list', 'lists') : `${kind}s`);
+
 const range = (low: number | undefined, high: number | undefined, unit: string): string => {
   if (low !== undefined && high !== undefined) return low === high ? `exactly ${formatCount(low)} ${unit}` : `${formatCount(low)} to ${formatCount(high)} ${unit}`;
   if (low !== undefined) return `at least ${formatCount(low)} ${unit}`;
@@ -65,7 +68,7 @@ export function fieldGroups(root: SchemaNode): FieldGroup[] {
     if (whole.const !== undefined) return JSON.stringify(whole.const);
     if (whole.enum) return whole.enum.map((v) => JSON.stringify(v)).join(', ');
     if (many) return [...new Set(many.map(kindOf))].join(' or ');
-    if (whole.items) return `list of ${kindOf(whole.items)}`;
+    if (whole.items) return `list of ${severalOf(kindOf(whole.items), hasFields(resolve(whole.items)))}`;
     if (node.$ref && hasFields(whole)) return `${nameOf(node.$ref)}${Array.isArray(whole.type) && whole.type.includes('null') ? ' or null' : ''}`;
     const types = typeof whole.type === 'string' ? [whole.type] : (whole.type ?? []);
     return types.map((t) => words[t] ?? t).join(' or ') || 'anything';

@@ -20,11 +20,11 @@ export function BoardBody({ board }: { board: Board }) {
   if (board.rows.length === 0) {
     if (isFiltered(view)) {
       const clear = (): void => setSearch((before) => { const next = new URLSearchParams(before); for (const field of ['modality', 'provider', 'within']) next.delete(field); return next; });
-      return <EmptyState title="Nothing matches these filters" act={<Button onClick={clear}>Take all entries</Button>}>No entry on this board matches all filters at once.</EmptyState>;
+      return <EmptyState level={2} title="Nothing matches these filters" act={<Button onClick={clear}>Take all entries</Button>}>No entry on this board matches all filters at once.</EmptyState>;
     }
     return board.gateClass.ranked
-      ? <EmptyState title="No entry in this gate class yet" act={<ButtonLink to="/method">How figures are made</ButtonLink>}>A board opens with its first two entries taken on equal terms.</EmptyState>
-      : <EmptyState title="This class is never ranked">Its gates do not determine every figure, so its entries give predictions only. They are named below.</EmptyState>;
+      ? <EmptyState level={2} title="No entry in this gate class yet" act={<ButtonLink to="/method">How figures are made</ButtonLink>}>A board opens with its first two entries taken on equal terms.</EmptyState>
+      : <EmptyState level={2} title="This class is never ranked">Its gates do not determine every figure, so its entries give predictions only. They are named below.</EmptyState>;
   }
   const demo = board.rows.filter((row) => row.demo).length;
   const drawn = search.get('view') !== 'table';

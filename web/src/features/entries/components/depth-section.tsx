@@ -18,7 +18,8 @@ function DepthPlot({ drawing }: { drawing: DepthDrawing }) {
   const headline = points.find((p) => p.headline);
   // The estimated part is drawn whole, the extrapolated part dashed; each is cut at the place where the other begins.
   const cut = farFrom ?? 100;
-  const named = points[2] ?? points[0];
+  const [first, second] = points;
+  const named = first && second ? { x: (first.x + second.x) / 2, y: Math.max(first.y, second.y) } : null;
   return (
     <XYPlot x={x} y={y} xTitle="Circuit depth (gates)" yTitle="Retained signal" height="high" label={`Retained signal against circuit depth, ${points.length} depths${bands.length > 0 ? ', with 50, 80 and 95 per cent bands' : ''}`}>
       <Stretched>
@@ -31,7 +32,7 @@ function DepthPlot({ drawing }: { drawing: DepthDrawing }) {
       </Stretched>
       <g aria-hidden="true">
         {farFrom === null ? null : <><line className="farline" x1={`${farFrom}%`} x2={`${farFrom}%`} y1="0" y2="100%" /><text x={`${farFrom}%`} y="0" dx="-7" dy="12" textAnchor="end" className="farword">extrapolated from here</text></>}
-        {bands.length > 0 && named ? <><line className="dimn" x1={`${named.x - 6}%`} x2={`${named.x - 6}%`} y1="54%" y2={`${named.y + 1}%`} /><text x={`${named.x - 6}%`} y="58%" textAnchor="middle">bands: 50, 80, 95 %</text></> : null}
+        {bands.length > 0 && named ? <><line className="dimn" x1={`${named.x}%`} x2={`${named.x}%`} y1="54%" y2={`${named.y + 1}%`} /><text x={`${named.x}%`} dx="-4" y="58%">bands: 50, 80, 95 %</text></> : null}
       </g>
       <Points label="Depths" points={points.map((p) => ({ key: String(p.depth), label: p.label, draw: <circle className="hollow dot" cx={`${p.x}%`} cy={`${p.y}%`} r={p.headline ? 6 : 4.5} /> }))} />
       {headline ? <text aria-hidden="true" className="lab named" x={`${headline.x}%`} y={`${headline.y}%`} dx="-12" dy="20" textAnchor="end">{headline.text} at depth {headline.depth}</text> : null}
@@ -45,7 +46,7 @@ export function DepthSection({ entry }: { entry: Entry }) {
   const { headline } = entry;
   const notes = (
     <>
-      <p><strong>Where the line is dashed.</strong> The longest circuit in the estimate has {entry.longestCircuit} gates. Beyond twice that, the method extrapolates.</p>
+      {drawing?.farFrom === null ? null : <p><strong>Where the line is dashed.</strong> The longest circuit in the estimate has {entry.longestCircuit} gates. Beyond twice that, the method extrapolates.</p>}
       {headline && headline.value !== null && headline.firstOrder !== null ? <p><strong>Single pass.</strong> The first of the eight passes alone gave {formatNumber(headline.firstOrder, figureDecimals(headline))} at depth {headline.depth}.</p> : null}
     </>
   );

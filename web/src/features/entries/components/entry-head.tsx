@@ -32,7 +32,7 @@ export function EntryHead({ entry }: { entry: Entry }) {
           { term: 'Provider', value: <Link to={`/find?q=${encodeURIComponent(entry.device.provider.name)}`}>{entry.device.provider.name}</Link> },
           { term: 'Device', value: <Link to={`/devices/${encodeURIComponent(entry.device.id)}`}>{entry.device.name}</Link> },
           { term: 'Register', value: `${plural(entry.register.length, 'qubit')} ${joinWords(entry.register)}` },
-          { term: 'Circuits run', value: <span className="nowrap">{formatSpan(entry.provenance.startedAt, entry.provenance.endedAt)}</span> },
+          { term: 'Circuits run', value: formatSpan(entry.provenance.startedAt, entry.provenance.endedAt) },
           { term: 'Frozen', value: formatDate(entry.frozenAt) },
           { term: 'Method', value: <Link to="/method">{entry.method}</Link> },
         ]} />

@@ -17,7 +17,7 @@ function FigureCells({ figure, axis, decimals, scale = 'plain', name }: { figure
     <>
       <td {...r.cell} className="ax">
         <BeamPlot axis={axis} value={figure.value} intervals={figure.intervals} zero={axis.domain[0] < 0} />
-        <div className="phoneaxis"><AxisStrip axis={axis} side="bottom" every={2} /></div>
+        <div className="phoneaxis"><AxisStrip axis={axis} side="bottom" narrow /></div>
       </td>
       <td {...r.cell} className="two" data-l={name}><b>{figureValue(figure, decimals, scale)}</b><span className="sub">{figureRange(figure, 0.95, decimals, scale) ?? 'no interval'}</span></td>
     </>
@@ -29,7 +29,7 @@ export function GateTable({ figures }: { figures: GateFigures }) {
   const { rows, loss, angle } = figures;
   return (
     <table className="figs" {...r.table}>
-      <caption>Gate loss and angle error <span className="quiet">(each on an axis of its own, 95 % intervals in figures)</span></caption>
+      <caption>Gate loss (thousandths) and angle error (radians) <span className="quiet">each on an axis of its own, 95 % intervals in figures</span></caption>
       <thead {...r.group}>
         <tr {...r.row}>
           <th {...r.columnHead} scope="col">Gate</th>
@@ -43,8 +43,8 @@ export function GateTable({ figures }: { figures: GateFigures }) {
         {rows.map((row) => (
           <tr key={row.label} {...r.row}>
             <th {...r.rowHead} scope="row" className="row">{row.words}</th>
-            <FigureCells figure={row.loss} axis={loss.axis} decimals={loss.decimals} scale="thousandths" name="Gate loss, thousandths" />
-            <FigureCells figure={row.angle} axis={angle.axis} decimals={angle.decimals} name="Angle error, radians" />
+            <FigureCells figure={row.loss} axis={loss.axis} decimals={loss.decimals} scale="thousandths" name="Gate loss" />
+            <FigureCells figure={row.angle} axis={angle.axis} decimals={angle.decimals} name="Angle error" />
           </tr>
         ))}
       </tbody>
