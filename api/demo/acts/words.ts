@@ -10,9 +10,10 @@ const onNotes = (checks: readonly Check[], stream: { next(): number }): string[]
   const sentences: string[] = [];
   if (noted(checks, 'run-sheet')) sentences.push('The circuits are the contributor’s own, so the entry is never ranked.');
   if (noted(checks, 'design')) sentences.push('The gates do not determine every figure: what they determine is printed, the rest is named.');
-  if (noted(checks, 'settled')) sentences.push('The estimate did not settle; the figures are those of the single pass and say so.');
+  if (noted(checks, 'settled')) sentences.push('The estimate did not settle: the gate errors are beyond what its passes can follow, so the entry is not ranked.');
   if (noted(checks, 'sealed') && !noted(checks, 'run-sheet')) sentences.push('The sealed circuits were not predicted within the 99 % range, so the entry is not ranked.');
-  if (noted(checks, 'misfit')) sentences.push('The counts do not fit one set of gates; the figures are an average and the note stays on the page.');
+  if (noted(checks, 'misfit') && noted(checks, 'design')) sentences.push('The counts do not fit the first-order model, as happens with such gates; predictions stand without intervals.');
+  else if (noted(checks, 'misfit')) sentences.push('The counts do not fit one set of gates; the figures are an average and the note stays on the page.');
   else if (noted(checks, 'drift')) sentences.push('One block stands apart from the others; the note stays on the page.');
   if (sentences.length > 0) return sentences;
   return [choose(stream, ['Every check passed.', 'The sealed circuits were predicted within the 99 % range, and the counts fit the estimate.', 'The counts fit the estimate in every block.', 'The circuits agree with the run sheet one by one, and every check passed.'])];
