@@ -1,7 +1,7 @@
 import { idealProbabilities } from '#api/lib/state-vector.ts';
 import type { Work } from '#api/lib/work.ts';
 import { callerOf } from '#api/middleware/find-caller.ts';
-import { Device } from '#api/entities/device.ts';
+import type { Device } from '#api/entities/device.ts';
 import type { Organisation } from '#api/entities/organisation.ts';
 import type { User } from '#api/entities/user.ts';
 import { createDevice } from '#api/modules/devices/service.ts';

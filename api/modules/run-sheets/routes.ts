@@ -52,8 +52,8 @@ export const runSheetRoutes: Route[] = [
       const { body, header } = scope;
       const key = readIdempotencyKey(header('idempotency-key'), false);
       return idempotently(workOf(scope), { key, fingerprint: fingerprintOf('POST', 'run-sheets', JSON.stringify(body)) }, async (work) => {
-        const sheet = await createRunSheet(work, body);
-        await work.em.populate(sheet, populate);
+        const { id } = await createRunSheet(work, body);
+        const sheet = await findRunSheet(work, id);
         return reply(presentRunSheet(sheet, null), { status: 202, headers: { location: `/api/v1/run-sheets/${sheet.id}` } });
       });
     },
