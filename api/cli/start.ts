@@ -48,9 +48,13 @@ const told = new Promise<'told'>((resolveTold) => {
 });
 
 /** Takes a step of the set-up whole: a stop waits for its end, and no further step begins. */
-const step = async <T>(work: Promise<T> | T): Promise<T> => {
-  const value = await work;
-  if (wasTold) throw new Told('stopped during the set-up');
+const step = async <T>(work: () => Promise<T>): Promise<T> => {
+  const check = (): void => {
+    if (wasTold) throw new Told('stopped during the set-up');
+  };
+  check();
+  const value = await work();
+  check();
   return value;
 };
 
@@ -65,7 +69,7 @@ const start = async (): Promise<KeptChild[]> => {
 
   const database = await startDatabase(settings, dataDir, secrets, say);
   started.push(() => database.stop());
-  const ran = await step(migrate(database.ownerUrl, database.url));
+  const ran = await step(() => migrate(database.ownerUrl, database.url));
   if (ran.length > 0) say(`Database schema: ${ran.join(', ')}.`);
 
   const real = settings.GOOGLE_CLIENT_ID !== undefined;
@@ -93,22 +97,21 @@ const start = async (): Promise<KeptChild[]> => {
 
   if (standIn) {
     const orm = await MikroORM.init(ormOptions(database.url, 2));
-    await registerPeople(orm.em.fork(), inventedSince);
-    await orm.close(true);
+    await step(() => registerPeople(orm.em.fork(), inventedSince)).finally(() => orm.close(true));
   }
-  await step(buildAll(say));
+  await step(() => buildAll(say));
 
   const built = { ...env, THREAD_FILE: resolve('dist/api/thread.js') };
   if (settings.DEMO ?? database.own) {
     // Filling is all or nothing, so a stop need not wait for its end.
     const filling = seedIfEmpty(configFrom({ ...built, LOG_LEVEL: 'warn' }), say);
     filling.catch(() => undefined);
-    await step(Promise.race([filling, told]));
+    await step(() => Promise.race([filling, told]));
   }
   const children = (['server', 'worker'] as const).map((name) => keepRunning(name === 'server' ? 'web' : name, resolve(`dist/api/${name}.js`), built, join(dataDir, 'logs', `${name}.log`), say));
   for (const child of children) started.push(() => child.stop());
-  await step(Promise.all(children.map((child) => child.ready)));
-  await step(waitForHealth(`http://${settings.HOST}:${settings.PORT}`));
+  await step(() => Promise.all(children.map((child) => child.ready)));
+  await step(() => waitForHealth(`http://${settings.HOST}:${settings.PORT}`));
 
   say(`\nEvenbeam is at ${publicUrl}`);
   if (standIn) say(`Sign-in is a stand-in on this machine; these invented people can sign in:\n${whoCanSignIn()}`);
