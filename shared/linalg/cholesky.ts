@@ -1,4 +1,4 @@
-import { subtractPanel } from '#shared/linalg/panel.ts';
+import { HELD_GROUPS, PanelStore } from '#shared/linalg/panel-store.ts';
 
 /** Rows handled together, and the length of the inner products: a panel of both fits the second-level cache. */
 const BLOCK = 48;
@@ -10,18 +10,18 @@ const SPAN = 240;
  */
 export class Cholesky {
   readonly n: number;
-  private readonly lower: Float64Array;
-  private readonly upper: Float64Array;
+  private readonly store: PanelStore;
 
-  private constructor(n: number, lower: Float64Array) {
+  private constructor(n: number, lower: Float64Array, plain: boolean) {
     this.n = n;
-    this.lower = lower;
-    this.upper = new Float64Array(n * n);
-    for (let i = 0; i < n; i++) for (let j = 0; j <= i; j++) this.upper[j * n + i] = lower[i * n + j]!;
+    this.store = new PanelStore(2 * n * n, n, plain);
+    this.store.matrix.set(lower);
+    const upper = this.store.matrix.subarray(n * n);
+    for (let i = 0; i < n; i++) for (let j = 0; j <= i; j++) upper[j * n + i] = lower[i * n + j]!;
   }
 
   /** Reads the lower triangle of `a` (n×n row-major) and overwrites it; null when a pivot is not positive. */
-  static factor(a: Float64Array, n: number): Cholesky | null {
+  static factor(a: Float64Array, n: number, plain = false): Cholesky | null {
     for (let j0 = 0; j0 < n; j0 += BLOCK) {
       const j1 = Math.min(n, j0 + BLOCK);
       for (let i = j0; i < n; i++) subtractRowProducts(a, n, i, j0, Math.min(j1, i + 1), j0);
@@ -35,35 +35,48 @@ export class Cholesky {
         }
       }
     }
-    return new Cholesky(n, a);
+    return new Cholesky(n, a, plain);
   }
 
   /** Overwrites each of `groups` groups (n×4 interleaved, one after another) by the solution of A·x = b. */
   solve(x: Float64Array, groups: number): void {
-    const { n, lower, upper } = this;
+    const size = 4 * this.n;
+    for (let from = 0; from < groups; from += HELD_GROUPS) {
+      const here = Math.min(HELD_GROUPS, groups - from);
+      const part = x.subarray(from * size, (from + here) * size);
+      this.store.vectors.set(part);
+      this.substitute(here);
+      part.set(this.store.vectors.subarray(0, here * size));
+    }
+  }
+
+  private substitute(groups: number): void {
+    const { n, store } = this;
+    const { matrix, vectors } = store;
     for (let i0 = 0; i0 < n; i0 += BLOCK) {
       const i1 = Math.min(n, i0 + BLOCK);
       for (let k0 = 0; k0 < i0; k0 += SPAN) {
         const k1 = Math.min(i0, k0 + SPAN);
-        for (let g = 0; g < groups; g++) subtractPanel(lower, n, i0, i1, k0, k1, x, g * n * 4, x, g * n * 4);
+        for (let g = 0; g < groups; g++) store.subtract(0, n, i0, i1, k0, k1, g * n * 4, g * n * 4);
       }
       for (let g = 0; g < groups; g++) {
         for (let i = i0; i < i1; i++) {
-          subtractPanel(lower, n, i, i + 1, i0, i, x, g * n * 4, x, g * n * 4);
-          divideFour(x, (g * n + i) * 4, lower[i * n + i]!);
+          store.subtract(0, n, i, i + 1, i0, i, g * n * 4, g * n * 4);
+          divideFour(vectors, (g * n + i) * 4, matrix[i * n + i]!);
         }
       }
     }
+    const upper = n * n;
     for (let i1 = n; i1 > 0; i1 -= BLOCK) {
       const i0 = Math.max(0, i1 - BLOCK);
       for (let k0 = i1; k0 < n; k0 += SPAN) {
         const k1 = Math.min(n, k0 + SPAN);
-        for (let g = 0; g < groups; g++) subtractPanel(upper, n, i0, i1, k0, k1, x, g * n * 4, x, g * n * 4);
+        for (let g = 0; g < groups; g++) store.subtract(upper, n, i0, i1, k0, k1, g * n * 4, g * n * 4);
       }
       for (let g = 0; g < groups; g++) {
         for (let i = i1 - 1; i >= i0; i--) {
-          subtractPanel(upper, n, i, i + 1, i + 1, i1, x, g * n * 4, x, g * n * 4);
-          divideFour(x, (g * n + i) * 4, upper[i * n + i]!);
+          store.subtract(upper, n, i, i + 1, i + 1, i1, g * n * 4, g * n * 4);
+          divideFour(vectors, (g * n + i) * 4, matrix[i * n + i]!);
         }
       }
     }

@@ -1,8 +1,9 @@
 import { Cholesky } from '#shared/linalg/cholesky.ts';
 import { addGram, addRowProducts } from '#shared/linalg/gram.ts';
 import { largestEigenvalue } from '#shared/linalg/lanczos.ts';
-import { subtractPanel } from '#shared/linalg/panel.ts';
-import { multiplyFour, multiplyVector, toDense, transposeSparse, type SparseRows } from '#shared/linalg/sparse.ts';
+import { HELD_GROUPS, PanelStore } from '#shared/linalg/panel-store.ts';
+import { SparseProduct } from '#shared/linalg/sparse-product.ts';
+import { multiplyVector, toDense, transposeSparse, type SparseRows } from '#shared/linalg/sparse.ts';
 import { invertSvd, rankAt, singularValues } from '#shared/linalg/svd.ts';
 import { AMBIGUOUS_FROM, AMBIGUOUS_TO, FAST_PATH_FLOOR, GAUGE_RESIDUE, RANK_CUT } from '#shared/linalg/tolerances.ts';
 import type { Gauge } from '#shared/method/gauge.ts';
@@ -73,11 +74,12 @@ export function fastInverse(design: SparseRows, gauge: Gauge): Inverse | null {
     for (let i = 0; i < columns; i++) y[i] = four[4 * i]!;
   }));
   if (!(sigmaR >= FAST_PATH_FLOOR * sigma1)) return null;
+  const product = new SparseProduct(transpose);
   return {
     rows, columns, rank: columns - gauge.dimension, rankAmbiguous: false, conditionRatio: sigmaR / sigma1, spectrum: [sigma1, sigmaR],
     nullBasis: gauge.basis, nullDimension: gauge.dimension,
     apply: (x, out, groups) => {
-      for (let g = 0; g < groups; g++) multiplyFour(transpose, x, g * rows * 4, out, g * columns * 4);
+      product.apply(x, out, groups);
       factor.solve(out, groups);
     },
     applyTranspose: (w) => {
@@ -101,22 +103,36 @@ export function svdInverse(design: SparseRows): Inverse {
   const { rows, columns } = design;
   const svd = singularValues(toDense(design), rows, columns);
   const rank = rankAt(svd.values, RANK_CUT);
-  // Kept with its sign turned: the panel product subtracts.
   const inverse = invertSvd(svd, rank, rows, columns);
   const nullBasis = new Float64Array((columns - rank) * columns);
   for (let k = rank; k < columns; k++) nullBasis.set(svd.right[k]!, (k - rank) * columns);
-  for (let i = 0; i < inverse.length; i++) inverse[i] = -inverse[i]!;
+  const product = denseProduct(inverse, columns, rows);
   return {
     rows, columns, rank, rankAmbiguous: rankAt(svd.values, AMBIGUOUS_FROM) !== rankAt(svd.values, AMBIGUOUS_TO),
     conditionRatio: rank > 0 ? svd.values[rank - 1]! / svd.values[0]! : 0, spectrum: Array.from(svd.values), nullBasis, nullDimension: columns - rank,
-    apply: (x, out, groups) => {
-      out.fill(0, 0, groups * columns * 4);
-      for (let g = 0; g < groups; g++) subtractPanel(inverse, rows, 0, columns, 0, rows, x, g * rows * 4, out, g * columns * 4);
-    },
+    apply: product,
     applyTranspose: (w) => {
       const weights = new Float64Array(rows);
-      for (let i = 0; i < columns; i++) for (let j = 0; j < rows; j++) weights[j]! -= w[i]! * inverse[i * rows + j]!;
+      for (let i = 0; i < columns; i++) for (let j = 0; j < rows; j++) weights[j]! += w[i]! * inverse[i * rows + j]!;
       return weights;
     },
+  };
+}
+
+/** out = A·x for a dense A (m×n) and groups of four vectors. */
+function denseProduct(a: Float64Array, m: number, n: number): Inverse['apply'] {
+  const store = new PanelStore(m * n, m + n);
+  // Kept with its sign turned: panels are subtracted.
+  for (let i = 0; i < a.length; i++) store.matrix[i] = -a[i]!;
+  const { vectors } = store;
+  return (x, out, groups) => {
+    for (let from = 0; from < groups; from += HELD_GROUPS) {
+      const here = Math.min(HELD_GROUPS, groups - from);
+      const image = here * n * 4;
+      vectors.set(x.subarray(from * n * 4, (from + here) * n * 4));
+      vectors.fill(0, image, image + here * m * 4);
+      for (let g = 0; g < here; g++) store.subtract(0, n, 0, m, 0, n, g * n * 4, image + g * m * 4);
+      out.set(vectors.subarray(image, image + here * m * 4), from * m * 4);
+    }
   };
 }
