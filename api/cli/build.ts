@@ -2,8 +2,6 @@ import { createHash } from 'node:crypto';
 import { existsSync, mkdirSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { pathToFileURL } from 'node:url';
-import { build as bundle } from 'esbuild';
-import { build as buildClient } from 'vite';
 
 const settings = ['package-lock.json', 'package.json', 'tsconfig.json'];
 const parts = {
@@ -25,14 +23,17 @@ const stampOf = (sources: readonly string[]): string => {
 
 const buildServer = async (): Promise<void> => {
   rmSync('dist/api', { recursive: true, force: true });
-  await bundle({
+  // The builders are loaded only when there is something to build: it spares every other start their weight.
+  const { build } = await import('esbuild');
+  await build({
     entryPoints: { server: 'api/server.ts', worker: 'api/worker.ts', thread: 'api/jobs/thread.ts' },
     outdir: 'dist/api', bundle: true, platform: 'node', target: 'node20', format: 'esm', packages: 'external', sourcemap: 'linked', logLevel: 'warning',
   });
 };
 
 const buildWeb = async (): Promise<void> => {
-  await buildClient({ configFile: 'web/vite.config.ts', logLevel: 'error' });
+  const { build } = await import('vite');
+  await build({ configFile: 'web/vite.config.ts', logLevel: 'error' });
 };
 
 /** Builds client and server into dist/, each only if its sources changed since the last time. Returns what was built. */
