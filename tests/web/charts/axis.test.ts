@@ -16,9 +16,10 @@ describe('axes', () => {
   });
 
   it('one value, equal values or none still give an axis of some width', () => {
-    for (const values of [[0.97], [0.97, 0.97], [0], []]) {
+    for (const values of [[0.97], [0.97, 0.97], [0], [0, 5e-324], [-5e-324], []]) {
       const { domain } = linearAxis(values);
       expect(domain[1]).toBeGreaterThan(domain[0]);
+      expect(linearAxis(values).ticks.length).toBeGreaterThan(1);
     }
   });
 

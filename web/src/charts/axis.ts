@@ -44,7 +44,8 @@ export function linearAxis(values: readonly number[], { count = 6, pad = 0.06, i
   const held = [...values, ...include].filter(Number.isFinite);
   let low = held.length > 0 ? Math.min(...held) : 0;
   let high = held.length > 0 ? Math.max(...held) : 1;
-  if (high - low <= Math.abs(high) * 1e-9) {
+  // Below a thousand-millionth of the values, or below what a scale can divide by, there is no extent to speak of.
+  if (high - low <= Math.max(Math.abs(low), Math.abs(high)) * 1e-9 || high - low < 1e-200) {
     const half = Math.max(Math.abs(high) * 0.01, 1e-6);
     low -= half;
     high += half;

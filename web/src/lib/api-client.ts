@@ -91,7 +91,7 @@ async function change(method: string, path: string, options: SendOptions, retry 
   if (response.ok) return response;
   const error = await failure(response);
   // The token belongs to the session; after a new sign-in in another tab it must be fetched again, once.
-  if (retry && response.status === 403 && error.code.includes('csrf')) {
+  if (retry && response.status === 403 && error.code === 'origin-refused') {
     forgetCsrfToken();
     return change(method, path, options, false);
   }

@@ -24,6 +24,8 @@ export interface SchemaNode {
   additionalProperties?: boolean | SchemaNode;
   oneOf?: readonly SchemaNode[];
   anyOf?: readonly SchemaNode[];
+  then?: SchemaNode;
+  else?: SchemaNode;
   $defs?: Readonly<Record<string, SchemaNode>>;
 }
 
@@ -43,6 +45,9 @@ export interface FieldGroup {
   description: string;
   rows: readonly FieldRow[];
 }
+
+/** The forms a value may take: of a choice, or of a condition. */
+const formsOf = (node: SchemaNode): readonly SchemaNode[] => node.oneOf ?? node.anyOf ?? [node.then, node.else].filter((form) => form !== undefined);
 
 const nameOf = (ref: string): string => ref.slice(ref.lastIndexOf('/') + 1);
 const words: Readonly<Record<string, string>> = { string: 'text', integer: 'whole number', number: 'number', boolean: 'true or false', object: 'object', array: 'list', null: 'null' };
@@ -64,10 +69,10 @@ export function fieldGroups(root: SchemaNode): FieldGroup[] {
 
   const kindOf = (node: SchemaNode): string => {
     const whole = resolve(node);
-    const many = whole.oneOf ?? whole.anyOf;
+    const many = formsOf(whole);
     if (whole.const !== undefined) return JSON.stringify(whole.const);
     if (whole.enum) return whole.enum.map((v) => JSON.stringify(v)).join(', ');
-    if (many) return [...new Set(many.map(kindOf))].join(' or ');
+    if (many.length > 0) return [...new Set(many.map(kindOf))].join(' or ');
     if (whole.items) return `list of ${severalOf(kindOf(whole.items), hasFields(resolve(whole.items)))}`;
     if (node.$ref && hasFields(whole)) return `${nameOf(node.$ref)}${Array.isArray(whole.type) && whole.type.includes('null') ? ' or null' : ''}`;
     const types = typeof whole.type === 'string' ? [whole.type] : (whole.type ?? []);
@@ -96,7 +101,7 @@ export function fieldGroups(root: SchemaNode): FieldGroup[] {
     for (const child of childrenOf(whole)) visit(child.$ref ? nameOf(child.$ref) : `${id}…`, child);
   };
   const childrenOf = (node: SchemaNode): SchemaNode[] => {
-    const direct = [...Object.values(node.properties ?? {}), ...(node.oneOf ?? []), ...(node.anyOf ?? []), ...(node.items ? [node.items] : []), ...(typeof node.additionalProperties === 'object' ? [node.additionalProperties] : [])];
+    const direct = [...Object.values(node.properties ?? {}), ...formsOf(node), ...(node.items ? [node.items] : []), ...(typeof node.additionalProperties === 'object' ? [node.additionalProperties] : [])];
     return direct.flatMap((child) => (child.$ref ? [child] : childrenOf(child)));
   };
   visit('dataset', root);

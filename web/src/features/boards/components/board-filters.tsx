@@ -1,19 +1,20 @@
-import { useSearchParams } from 'react-router-dom';
 import { boardFigure, type Board } from '#shared/contracts/boards.ts';
 import { Choice } from '#web/components/choice.tsx';
 import { Select } from '#web/components/select.tsx';
 import { wordsOfModality } from '#web/lib/modality-words.ts';
 import { capitalise } from '#shared/domain/format.ts';
 import { boardFigureWords, viewOf, withField, withinChoices } from '../board-view.ts';
+import { useAddressSearch, useSetAddressSearch } from '../use-address-search.ts';
 
 const figureOptions = boardFigure.options.map((value) => ({ value, label: boardFigureWords[value] }));
 const anyDate = { value: '', label: 'Any date' };
 
 /** Figure, modality, provider, last circuit and view; all of it lives in the address. */
 export function BoardFilters({ filters }: { filters: Board['filters'] | undefined }) {
-  const [search, setSearch] = useSearchParams();
+  const search = useAddressSearch();
+  const setSearch = useSetAddressSearch();
   const view = viewOf(search);
-  const set = (field: string, value: string): void => setSearch(withField(search, field, value), { replace: true, preventScrollReset: true });
+  const set = (field: string, value: string): void => setSearch(withField(search, field, value));
   const days = [...new Set([...withinChoices, ...(view.within ? [view.within] : [])])].sort((a, b) => a - b);
   const modalities = [...new Set([...(filters?.modalities ?? []), ...(view.modality ? [view.modality] : [])])];
   const providers = filters?.providers ?? [];
