@@ -56,11 +56,7 @@ export function fastInverse(design: SparseRows, gauge: Gauge): Inverse | null {
     multiplyVector(design, x, scratch);
     multiplyVector(transpose, scratch, y);
   }));
-  let residue = 0;
-  for (let q = 0; q < gauge.dimension; q++) {
-    multiplyVector(design, gauge.basis.subarray(q * columns, (q + 1) * columns), scratch);
-    for (let i = 0; i < rows; i++) residue += scratch[i]! * scratch[i]!;
-  }
+  const residue = squaredImage(design, gauge);
   if (!(Math.sqrt(residue) <= GAUGE_RESIDUE * sigma1)) return null;
   const gram = new Float64Array(columns * columns);
   addGram(design, gram);
@@ -90,6 +86,23 @@ export function fastInverse(design: SparseRows, gauge: Gauge): Inverse | null {
       return weights;
     },
   };
+}
+
+/** ‖CQ‖² (Frobenius). */
+function squaredImage(design: SparseRows, gauge: Gauge): number {
+  const { rows, columns } = design;
+  const product = new SparseProduct(design);
+  const groups = Math.ceil(gauge.dimension / 4);
+  const x = new Float64Array(groups * columns * 4);
+  for (let q = 0; q < gauge.dimension; q++) {
+    const at = (q >> 2) * columns * 4 + (q & 3);
+    for (let j = 0; j < columns; j++) x[at + 4 * j] = gauge.basis[q * columns + j]!;
+  }
+  const image = new Float64Array(groups * rows * 4);
+  product.apply(x, image, groups);
+  let sum = 0;
+  for (let i = 0; i < image.length; i++) sum += image[i]! * image[i]!;
+  return sum;
 }
 
 function transposeRows(a: Float64Array, rows: number, columns: number): Float64Array {

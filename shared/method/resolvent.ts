@@ -1,3 +1,4 @@
+import { ColumnStore } from '#shared/linalg/column-store.ts';
 import { luFactor } from '#shared/linalg/lu.ts';
 
 /** A step that moves the eigenvalue by less is the last: each is some ten times smaller than the one before. */
@@ -14,16 +15,12 @@ const INVERSE_STEPS = 4;
 export class Resolvent {
   private readonly start: Float64Array;
   private readonly left: Float64Array;
-  private readonly r: Float64Array;
-  private readonly x: Float64Array;
-  private readonly residual: Float64Array;
+  private readonly r: ColumnStore;
 
   private constructor(start: Float64Array, left: Float64Array, r: Float64Array) {
     this.start = start;
     this.left = left;
-    this.r = r;
-    this.x = new Float64Array(start.length);
-    this.residual = new Float64Array(start.length);
+    this.r = new ColumnStore(r, start.length);
   }
 
   /** @param map T̂ (size² row-major) @param transposedMap its transpose; both are used up; null where λ̂ is not simple */
@@ -61,7 +58,8 @@ export class Resolvent {
    * @returns NaN when the steps do not settle
    */
   solve(image: Float64Array, advance: (x: Float64Array) => void): number {
-    const { x, left, residual, r } = this;
+    const { left, r } = this;
+    const { x: residual, out: x } = r;
     const size = x.length;
     x.set(this.start);
     let lambda = NaN;
@@ -77,33 +75,8 @@ export class Resolvent {
       if (Math.abs(next - lambda) < STILL) return next;
       lambda = next;
       for (let i = 0; i < size; i++) residual[i] = image[i]! - lambda * x[i]!;
-      addProduct(r, residual, x, size);
+      r.addProduct();
     }
     return NaN;
-  }
-}
-
-/** out += A·x, A size² row-major; four rows at a time, as many sums as the processor can keep going. */
-function addProduct(a: Float64Array, x: Float64Array, out: Float64Array, size: number): void {
-  let i = 0;
-  for (; i + 3 < size; i += 4) {
-    const r0 = i * size, r1 = r0 + size, r2 = r1 + size, r3 = r2 + size;
-    let s0 = 0, s1 = 0, s2 = 0, s3 = 0;
-    for (let j = 0; j < size; j++) {
-      const v = x[j]!;
-      s0 += a[r0 + j]! * v;
-      s1 += a[r1 + j]! * v;
-      s2 += a[r2 + j]! * v;
-      s3 += a[r3 + j]! * v;
-    }
-    out[i]! += s0;
-    out[i + 1]! += s1;
-    out[i + 2]! += s2;
-    out[i + 3]! += s3;
-  }
-  for (; i < size; i++) {
-    let s = 0;
-    for (let j = 0; j < size; j++) s += a[i * size + j]! * x[j]!;
-    out[i]! += s;
   }
 }

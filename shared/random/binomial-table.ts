@@ -1,5 +1,7 @@
 /** Widest table kept, in standard deviations times two; beyond it draws go through rejection. */
 const WIDEST = 4096;
+/** Half the distance between two uniform numbers. */
+const HALF_STEP = 5.551115123125783e-17;
 /** The tails left out hold less than 2⁻⁵³ of the probability on each side, less than one step of the uniform numbers. */
 const REACH = 9;
 
@@ -8,9 +10,9 @@ const REACH = 9;
  * F is summed from both tails towards the mode, where rounding is least. A guide by ⌊u·size⌋ makes the search a step or two.
  */
 export class BinomialTable {
-  private readonly first: number;
-  private readonly cumulative: Float64Array;
-  private readonly guide: Uint16Array;
+  readonly first: number;
+  readonly cumulative: Float64Array;
+  readonly guide: Uint16Array;
 
   private constructor(first: number, cumulative: Float64Array) {
     this.first = first;
@@ -47,8 +49,13 @@ export class BinomialTable {
       sum += mass[i]! / total;
       cumulative[i] = sum;
     }
-    cumulative[mass.length - 1] = 1;
-    return new BinomialTable(from, cumulative);
+    // What no uniform number can reach is cut off: below, sums under half a step; above, everything after the first sum of 1.
+    let low = 0;
+    while (cumulative[low]! < HALF_STEP) low++;
+    let high = low;
+    while (high < mass.length - 1 && cumulative[high]! < 1 - HALF_STEP) high++;
+    cumulative[high] = 1;
+    return new BinomialTable(from + low, cumulative.slice(low, high + 1));
   }
 
   draw(u: number): number {

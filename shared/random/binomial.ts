@@ -10,7 +10,8 @@ const WALK_BELOW = 10;
  * - nπ < 10: inversion. One uniform u is walked through P(0) = (1 − π)ⁿ (by repeated squaring), P(x) = P(x − 1)·(n − x + 1)/x·π/(1 − π);
  *   the result is the first x at which u falls below what is left. A walk past n (rounding) starts again with a new u.
  * - otherwise transformed rejection with squeeze, BTRS ("The generation of binomial random variates", J. Stat. Comput. Simul. 46,
- *   101, 1993): two uniforms u, v a trial, in this order.
+ *   101, 1993): two uniforms u, v a trial, in this order; P(k)/P(mode) is multiplied out near the mode, else taken from
+ *   Stirling's series.
  *
  * Only + − × ÷, sqrt, floor, abs and @stdlib's ln are used, so that the same seed gives the same numbers on every engine.
  */
@@ -64,14 +65,32 @@ function rejection(next: { next: () => number }, n: number, p: number): number {
     const k = Math.floor(((2 * a) / us + b) * u + centre);
     if (us >= 0.07 && v <= squeeze) return k;
     if (!(k >= 0 && k <= n)) continue;
-    const alpha = (2.83 + 5.1 / b) * spread;
-    const odds = p / (1 - p);
-    const m = Math.floor((n + 1) * p);
-    const bound =
-      (m + 0.5) * ln((m + 1) / (odds * (n - m + 1))) + (n + 1) * ln((n - m + 1) / (n - k + 1)) + (k + 0.5) * ln((odds * (n - k + 1)) / (k + 1)) +
-      stirlingTail(m) + stirlingTail(n - m) - stirlingTail(k) - stirlingTail(n - k);
-    if (ln((v * alpha) / (a / (us * us) + b)) <= bound) return k;
+    const height = (v * (2.83 + 5.1 / b) * spread) / (a / (us * us) + b);
+    if (isBelow(height, n, p, k)) return k;
   }
+}
+
+/** Within this many steps of the mode P(k)/P(mode) is multiplied out; the products stay finite up to the shots beside it. */
+const NEAR = 25;
+const NEAR_SHOTS = 1e9;
+
+/** Whether height ≤ P(k)/P(m), m the mode. */
+function isBelow(height: number, n: number, p: number, k: number): boolean {
+  const odds = p / (1 - p);
+  const m = Math.floor((n + 1) * p);
+  if (Math.abs(k - m) <= NEAR && n <= NEAR_SHOTS) {
+    let up = 1;
+    let down = 1;
+    for (let i = Math.min(k, m) + 1; i <= Math.max(k, m); i++) {
+      up *= (n - i + 1) * odds;
+      down *= i;
+    }
+    return k > m ? height * down <= up : height * up <= down;
+  }
+  const bound =
+    (m + 0.5) * ln((m + 1) / (odds * (n - m + 1))) + (n + 1) * ln((n - m + 1) / (n - k + 1)) + (k + 0.5) * ln((odds * (n - k + 1)) / (k + 1)) +
+    stirlingTail(m) + stirlingTail(n - m) - stirlingTail(k) - stirlingTail(n - k);
+  return ln(height) <= bound;
 }
 
 /** ln k! − [½ ln 2π + (k + ½) ln(k + 1) − (k + 1)] for k = 0 … 9, computed to 17 digits. */

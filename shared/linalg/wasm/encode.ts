@@ -4,6 +4,7 @@
  */
 
 export const I32 = 0x7f;
+export const I64 = 0x7e;
 export const V128 = 0x7b;
 
 /** Code is a list of bytes, built by nesting. */
@@ -48,19 +49,37 @@ export const load = (address: Code, offset = 0): Code => [...address, ...vector(
 /** One double, twice. */
 export const splat = (address: Code, offset = 0): Code => [...address, ...vector(0x0a), 3, ...unsigned(offset)];
 export const store = (address: Code, value: Code, offset = 0): Code => [...address, ...value, ...vector(0x0b), 3, ...unsigned(offset)];
-export const zero = (): Code => [...vector(0x0c), ...new Array<number>(16).fill(0)];
 export const add2 = (a: Code, b: Code): Code => [...a, ...b, ...vector(0xf0)];
 export const subtract2 = (a: Code, b: Code): Code => [...a, ...b, ...vector(0xf1)];
 export const multiply2 = (a: Code, b: Code): Code => [...a, ...b, ...vector(0xf2)];
+/** Sum of the two doubles of a vector local. */
+export const sum2 = (local: number): Code => [...get(local), ...vector(0x21), 0, ...get(local), ...vector(0x21), 1, 0xa0];
+export const addDoubles = (a: Code, b: Code): Code => [...a, ...b, 0xa0];
+export const storeDouble = (address: Code, value: Code): Code => [...address, ...value, 0x39, 3, 0];
 /** 32-bit integer at address + offset. */
 export const integer = (address: Code, offset = 0): Code => [...address, 0x28, 2, ...unsigned(offset)];
+
+/** Operations on 64-bit integers. */
+export const long = {
+  constant: (value: number): Code => [0x42, ...signed(value)],
+  load: (address: Code, offset: number): Code => [...address, 0x29, 3, ...unsigned(offset)],
+  store: (address: Code, value: Code, offset: number): Code => [...address, ...value, 0x37, 3, ...unsigned(offset)],
+  times: (a: Code, b: Code): Code => [...a, ...b, 0x7e],
+  xor: (a: Code, b: Code): Code => [...a, ...b, 0x85],
+  left: (a: Code, by: number): Code => [...a, 0x42, ...signed(by), 0x86],
+  right: (a: Code, by: number): Code => [...a, 0x42, ...signed(by), 0x88],
+  rotate: (a: Code, by: number): Code => [...a, 0x42, ...signed(by), 0x89],
+  /** As a double, times 2⁻⁵³. */
+  share: (a: Code): Code => [...a, 0xba, 0x44, 0, 0, 0, 0, 0, 0, 0xa0, 0x3c, 0xa2],
+};
 
 export interface Kernel {
   name: string;
   /** How many 32-bit parameters it takes; they are locals 0, 1, … */
   parameters: number;
-  /** Further locals, in order: integers, then vectors. */
+  /** Further locals, in order: integers, 64-bit integers, vectors. */
   integers: number;
+  longs?: number;
   vectors: number;
   body: Code;
 }
@@ -78,7 +97,7 @@ export function encodeModule(kernels: readonly Kernel[]): Uint8Array {
   const functions = list(kernels.map((_, i) => unsigned(i)));
   const exported = list(kernels.map((k, i) => [...text(k.name), 0x00, ...unsigned(i)]));
   const bodies = list(kernels.map((k) => {
-    const code = [...list([[...unsigned(k.integers), I32], [...unsigned(k.vectors), V128]]), ...k.body, 0x0b];
+    const code = [...list([[...unsigned(k.integers), I32], [...unsigned(k.longs ?? 0), I64], [...unsigned(k.vectors), V128]]), ...k.body, 0x0b];
     return [...unsigned(code.length), ...code];
   }));
   return Uint8Array.from([

@@ -1,6 +1,7 @@
 /** The WebAssembly kernels and plain TypeScript must give the same bits: a result may not depend on where it was computed. */
 import { describe, expect, test } from 'vitest';
 import { Cholesky } from '#shared/linalg/cholesky.ts';
+import { ColumnStore } from '#shared/linalg/column-store.ts';
 import { PanelStore } from '#shared/linalg/panel-store.ts';
 import { SparseBuilder } from '#shared/linalg/sparse.ts';
 import { SparseProduct } from '#shared/linalg/sparse-product.ts';
@@ -74,4 +75,17 @@ describe.each([['one qubit', one('id', ['rx', QUARTER], 'h', 't'), [0]], ['two q
       sameBits(p, q);
     }
   });
+});
+
+test.each([9, 16, 225])('a matrix of order %i kept by columns', (n) => {
+  const g = seeded(`columns ${n}`);
+  const [a, x, y] = [randomMatrix(n, n, g), randomMatrix(n, 1, g), randomMatrix(n, 1, g)];
+  const [fast, plain] = [new ColumnStore(a, n), new ColumnStore(a, n, true)];
+  for (const store of [fast, plain]) {
+    store.x.set(x);
+    store.out.set(y);
+    store.addProduct();
+  }
+  sameBits(fast.out, plain.out);
+  product(a, x, n, n, 1).forEach((v, i) => expect(Math.abs(fast.out[i]! - y[i]! - v)).toBeLessThan(1e-12));
 });

@@ -2,11 +2,11 @@ import { expect, test } from 'vitest';
 import { openStream } from '#shared/random/streams.ts';
 import { Xoshiro256 } from '#shared/random/xoshiro256.ts';
 
-function fromWords(words: bigint[]): Xoshiro256 {
+function fromWords(words: bigint[], plain = false): Xoshiro256 {
   const bytes = new Uint8Array(32);
   const view = new DataView(bytes.buffer);
   words.forEach((w, i) => view.setBigUint64(8 * i, w, true));
-  return new Xoshiro256(bytes);
+  return new Xoshiro256(bytes, plain);
 }
 
 const MASK = (1n << 64n) - 1n;
@@ -33,9 +33,9 @@ test('the first words of state 1, 2, 3, 4 are the published ones (memory)', () =
   for (const word of [11520n, 0n, 1509978240n, 1215971899390074240n, 1216172134540287360n, 607988272756665600n]) expect(g.next()).toBe(asDouble(word));
 });
 
-test('ten thousand numbers equal the recurrence in 64-bit integers', () => {
+test.each([false, true])('ten thousand numbers equal the recurrence in 64-bit integers (plain TypeScript: %s)', (plain) => {
   const words = [0x0123456789abcdefn, 0xfedcba9876543210n, 0xdeadbeefcafef00dn, 0x8000000000000001n];
-  const g = fromWords(words);
+  const g = fromWords(words, plain);
   const want = reference([...words]);
   for (let i = 0; i < 10_000; i++) expect(g.next()).toBe(asDouble(want.next().value as bigint));
 });
@@ -71,6 +71,15 @@ test('a jump is 2¹²⁸ steps: the step matrix squared 128 times', () => {
   const g = fromWords(words);
   g.jump();
   for (let i = 0; i < 20; i++) expect(g.next()).toBe(want.next());
+});
+
+test('a jump counts from the number given out last, not from those made in advance', () => {
+  const [early, late] = [fromWords([5n, 6n, 7n, 8n]), fromWords([5n, 6n, 7n, 8n])];
+  for (let i = 0; i < 3; i++) late.next();
+  late.jump();
+  early.jump();
+  for (let i = 0; i < 3; i++) early.next();
+  for (let i = 0; i < 10; i++) expect(late.next()).toBe(early.next());
 });
 
 test('streams of one seed differ, and repeat', () => {
