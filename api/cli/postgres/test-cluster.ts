@@ -1,5 +1,5 @@
 import { execFileSync } from 'node:child_process';
-import { createHash } from 'node:crypto';
+import { createHash, randomBytes } from 'node:crypto';
 import { existsSync, mkdirSync, readdirSync, readFileSync, renameSync, rmSync } from 'node:fs';
 import { join, resolve } from 'node:path';
 import { migrate } from '#api/lib/migrate.ts';
@@ -33,7 +33,7 @@ const alive = (pid: number): boolean => existsSync(`/proc/${pid}`);
 /** Folders of runs whose process is gone are stopped and removed. */
 const clearOldRuns = async (root: string, bin: string): Promise<void> => {
   for (const name of readdirSync(root)) {
-    const pid = Number(/^(?:run|making)-(\d+)$/.exec(name)?.[1] ?? NaN);
+    const pid = Number(/^(?:run|making)-(\d+)(?:-[0-9a-f]+)?$/.exec(name)?.[1] ?? NaN);
     if (Number.isNaN(pid) || alive(pid)) continue;
     const plan = { bin, folder: join(root, name), adminPassword: testPasswords.admin };
     await clearRemains(plan);
@@ -61,14 +61,16 @@ export const startTestCluster = async (bin: string): Promise<TestCluster> => {
   const root = reachableFolder(resolve('.data/test'));
   await clearOldRuns(root, bin);
   const stamp = stampOf(bin);
+  // One process may start two: the tests of the services and those in the browser each have their own.
+  const own = `${process.pid}-${randomBytes(4).toString('hex')}`;
   const template = join(root, `template-${stamp}`);
   if (!existsSync(template)) {
-    const making = { bin, folder: join(root, `making-${process.pid}`), adminPassword: testPasswords.admin, unsafe: true };
+    const making = { bin, folder: join(root, `making-${own}`), adminPassword: testPasswords.admin, unsafe: true };
     await makeTemplate(making);
     if (!existsSync(template)) renameSync(making.folder, template);
     for (const name of readdirSync(root)) if (name.startsWith('template-') && name !== `template-${stamp}`) rmSync(join(root, name), { recursive: true, force: true });
   }
-  const folder = join(root, `run-${process.pid}`);
+  const folder = join(root, `run-${own}`);
   mkdirSync(root, { recursive: true });
   rmSync(folder, { recursive: true, force: true });
   execFileSync('cp', ['--archive', '--reflink=auto', template, folder]);
