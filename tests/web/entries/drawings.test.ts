@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { intervalAt } from '#shared/domain/figure-words.ts';
 import { depthDrawing } from '#web/features/entries/depth-data.ts';
-import { angleNotes, headlineOf } from '#web/features/entries/entry-words.ts';
+import { angleNotes, fileTitle, headlineOf } from '#web/features/entries/entry-words.ts';
 import { gateFigures } from '#web/features/entries/gate-rows.ts';
 import { sealedDrawing } from '#web/features/entries/sealed-data.ts';
 import { entryFixture } from '#tests/support/fixtures/entries.ts';
@@ -87,5 +87,10 @@ describe('headline sentence', () => {
     const headline = headlineOf(entryFixture);
     expect(`${headline?.before}${headline?.value}${headline?.after}`).toBe('After sixteen gates, Meadow-5 keeps 96.95\u202f% of the ideal signal, with a 95\u202f% interval from 96.58\u202f% to 97.32\u202f%.');
     expect(headlineOf({ ...entryFixture, headline: makeFigure('retained-signal', null, 0) })).toBeNull();
+  });
+
+  it('a drawing that leaves the page says what it shows and that the device is invented', () => {
+    expect(fileTitle(entryFixture, 'retained signal by depth')).toBe('Meadow-5, EVB-000042.2: retained signal by depth (demonstration data)');
+    expect(fileTitle({ ...entryFixture, demo: false }, 'x')).toBe('Meadow-5, EVB-000042.2: x');
   });
 });

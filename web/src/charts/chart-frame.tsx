@@ -14,16 +14,18 @@ interface ChartFrameProps {
   table: ChartTable;
   /** Stem of the names of downloaded files. */
   fileName: string;
+  /** Title inside the drawing's file, where the page around it is missing; the title without it. */
+  fileTitle?: string;
   children: ReactNode;
 }
 
 /** A chart with all that belongs to it: title, sentence, the same numbers as a table, and both as files. */
-export function ChartFrame({ title, quiet, says, table, fileName, children }: ChartFrameProps) {
+export function ChartFrame({ title, quiet, says, table, fileName, fileTitle, children }: ChartFrameProps) {
   const plot = useRef<HTMLDivElement>(null);
   const [read, setRead] = useState<string | null>(null);
   const saveDrawing = (): void => {
     const drawn = plot.current?.querySelector('svg');
-    if (drawn) saveFile(`${fileName}.svg`, 'image/svg+xml', standaloneSvg(drawn, title));
+    if (drawn) saveFile(`${fileName}.svg`, 'image/svg+xml', standaloneSvg(drawn, fileTitle ?? title));
   };
   return (
     <figure>

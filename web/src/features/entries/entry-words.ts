@@ -14,6 +14,10 @@ export const gateWords = (entry: Pick<Entry, 'gates' | 'register'>, label: strin
 
 export const qubitNames = (entry: Pick<Entry, 'register'>, qubits: readonly number[]): string => joinWords(qubits.map((q) => entry.register[q] ?? String(q)));
 
+/** Title of a drawing that leaves the page: it must say by itself what it shows, and whether the device is invented. */
+export const fileTitle = (entry: Pick<Entry, 'device' | 'accession' | 'version' | 'demo'>, what: string): string =>
+  `${entry.device.name}, ${entry.accession}.${entry.version}: ${what}${entry.demo ? ' (demonstration data)' : ''}`;
+
 export interface Headline {
   before: string;
   value: string;

@@ -4,10 +4,10 @@ import { Beam } from '#web/charts/beam.tsx';
 import type { BoardDrawingData } from '../board-data.ts';
 
 const rowHeight = 36;
-const plot = { from: 240, width: 460 };
+const plot = { from: 300, width: 420 };
 
 /** The board as one drawing, for the SVG file: names, beams on the common axis, numbers. */
-export function BoardDrawing({ rows, data, width = 900 }: { rows: readonly BoardRow[]; data: BoardDrawingData; width?: number }) {
+export function BoardDrawing({ rows, data, width = 920 }: { rows: readonly BoardRow[]; data: BoardDrawingData; width?: number }) {
   const height = rows.length * rowHeight + 30;
   return (
     <svg width={width} height={height}>
@@ -19,7 +19,7 @@ export function BoardDrawing({ rows, data, width = 900 }: { rows: readonly Board
       {rows.map((row, i) => (
         <g key={row.accession} className="plot-words">
           <text className="t" x="0" y={(i + 0.5) * rowHeight - 2}>{row.device.name}</text>
-          <text x="0" y={(i + 0.5) * rowHeight + 13}>{row.device.provider.name}</text>
+          <text x="0" y={(i + 0.5) * rowHeight + 13}>{row.device.provider.name}{row.demo ? '; demonstration data' : ''}</text>
           <text className="t" x={plot.from + plot.width + 24} y={(i + 0.5) * rowHeight - 2}>{figureValue(row.figure, data.decimals)}</text>
           <text x={plot.from + plot.width + 24} y={(i + 0.5) * rowHeight + 13}>{figureRange(row.figure, 0.95, data.decimals)}</text>
         </g>

@@ -4,7 +4,7 @@ import { formatDate } from '#shared/domain/format-date.ts';
 import { AxisStrip } from '#web/charts/axis-strip.tsx';
 import { BeamPlot } from '#web/charts/beam-plot.tsx';
 import { FigureText } from '#web/charts/figure-beams.tsx';
-import { AccessionLink, entryPath } from '#web/components/accession-link.tsx';
+import { AccessionLink, entryPath, nameClass } from '#web/components/accession-link.tsx';
 import { DemoTag } from '#web/components/demo.tsx';
 import { tableRoles as r } from '#web/components/table-roles.ts';
 import { modalityWords } from '#web/lib/modality-words.ts';
@@ -32,7 +32,7 @@ export function BoardRows({ rows, data, caption, quiet }: { rows: readonly Board
           return (
             <tr key={row.accession} {...r.row} className={mine ? 'own' : undefined}>
               <th {...r.rowHead} scope="row" className="c-name">
-                <Link className="name nowrap" to={entryPath(row.accession, row.version)}>{row.device.name}</Link>
+                <Link className={nameClass(row.device.name)} to={entryPath(row.accession, row.version)}>{row.device.name}</Link>
                 <span className="sub">{row.device.provider.name}, {modalityWords[row.device.modality]}{row.demo ? <>; <DemoTag /></> : null}</span>
               </th>
               <td {...r.cell} className="c-plot"><BeamPlot axis={data.axis} value={row.figure.value} intervals={row.figure.intervals} own={mine} /></td>

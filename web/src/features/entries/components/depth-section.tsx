@@ -2,13 +2,14 @@ import { useId, useMemo } from 'react';
 import type { Entry } from '#shared/contracts/entries.ts';
 import { figureDecimals } from '#shared/domain/figure-words.ts';
 import { formatDate } from '#shared/domain/format-date.ts';
-import { formatNumber } from '#shared/domain/format.ts';
+import { formatCount, formatNumber, joinWords, plural } from '#shared/domain/format.ts';
 import { ChartFrame } from '#web/charts/chart-frame.tsx';
 import { Points } from '#web/charts/points.tsx';
 import { Stretched, XYPlot } from '#web/charts/xy-plot.tsx';
 import { EmptyState } from '#web/components/blank-state.tsx';
 import { Section } from '#web/components/section.tsx';
 import { depthDrawing, type DepthDrawing } from '../depth-data.ts';
+import { fileTitle } from '../entry-words.ts';
 
 const bandClass: Readonly<Record<number, string>> = { 0.95: 'b95', 0.8: 'b80', 0.5: 'b50' };
 
@@ -40,6 +41,14 @@ function DepthPlot({ drawing }: { drawing: DepthDrawing }) {
   );
 }
 
+/** What is drawn, what is missing and why, and what may not be concluded. */
+const depthSays = (entry: Entry, drawing: DepthDrawing): string => {
+  const missing = entry.figures.filter((f) => f.key === 'retained-signal' && f.depth !== null && f.value === null);
+  const bands = drawing.bands.length > 0 ? `the bands hold 50, 80 and 95 % of ${formatCount(entry.replicates)} bootstrap replicates` : 'no bands are drawn, because not every depth has intervals';
+  const gap = missing.length > 0 ? ` Not determined at ${plural(missing.length, 'depth')} ${joinWords(missing.map((f) => String(f.depth)))}${missing[0]?.reason ? `: ${missing[0].reason.replace(/\.$/, '')}` : ''}.` : '';
+  return `The points are the estimates at each bench depth, joined for the eye; ${bands}. Depths are spaced by doubling.${gap} Nothing here covers drift after ${formatDate(entry.provenance.endedAt)}, other qubits, or gates outside this gate class.`;
+};
+
 /** Retained signal against depth, with bands and the extrapolated part. */
 export function DepthSection({ entry }: { entry: Entry }) {
   const drawing = useMemo(() => depthDrawing(entry.figures, entry.longestCircuit), [entry.figures, entry.longestCircuit]);
@@ -54,7 +63,7 @@ export function DepthSection({ entry }: { entry: Entry }) {
     <Section title="Retained signal" aside="1 is an ideal device; 0 is nothing left." notes={drawing ? notes : undefined}>
       {drawing ? (
         <ChartFrame title="Retained signal over the bench circuits, by depth" table={drawing.table} fileName={`evenbeam-${entry.accession}.${entry.version}-retained-signal`}
-          says={`The points are the estimates at each bench depth, joined for the eye; the bands hold 50, 80 and 95 % of ${formatNumber(entry.replicates, 0)} bootstrap replicates. Depths are spaced by doubling. The bands do not cover drift after ${formatDate(entry.provenance.endedAt)}, other qubits, or gates outside this gate class.`}>
+          fileTitle={fileTitle(entry, 'retained signal by depth')} says={depthSays(entry, drawing)}>
           <DepthPlot drawing={drawing} />
         </ChartFrame>
       ) : (

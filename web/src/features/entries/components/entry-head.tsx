@@ -26,7 +26,7 @@ export function EntryHead({ entry }: { entry: Entry }) {
       <PageTitle>{`${entry.device.name}, ${name}`}</PageTitle>
       <div>
         <p className="above"><Link to={`/boards/${entry.class.id}`}>{entry.gateClassTitle}</Link>, entry {entry.accession}, version {entry.version} of {entry.versions.length}</p>
-        <h1 className="nowrap">{entry.device.name}</h1>
+        <h1 className="devicename">{entry.device.name}</h1>
         <p className="opening">{headline ? <>{headline.before}<b>{headline.value}</b>{headline.after}</> : <>No headline figure: {entry.headline?.reason ?? 'retained signal is not determined here'}</>}</p>
         <Facts items={[
           { term: 'Provider', value: <Link to={`/find?q=${encodeURIComponent(entry.device.provider.name)}`}>{entry.device.provider.name}</Link> },

@@ -24,11 +24,11 @@ function FigureCells({ figure, axis, decimals, scale = 'plain', name }: { figure
   );
 }
 
-/** Gate loss and angle error side by side, each with one axis for all gates. */
-export function GateTable({ figures }: { figures: GateFigures }) {
+/** Gate loss and angle error side by side, each with one axis for all gates. `register`: gates are named with their qubits. */
+export function GateTable({ figures, register = false }: { figures: GateFigures; register?: boolean }) {
   const { rows, loss, angle } = figures;
   return (
-    <table className="figs" {...r.table}>
+    <table className={register ? 'figs register' : 'figs'} {...r.table}>
       <caption>Gate loss (thousandths) and angle error (radians) <span className="quiet">each on an axis of its own, 95 % intervals in figures</span></caption>
       <thead {...r.group}>
         <tr {...r.row}>

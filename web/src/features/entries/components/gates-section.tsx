@@ -6,15 +6,18 @@ import { angleNotes, qubitNames } from '../entry-words.ts';
 import { gateFigures } from '../gate-rows.ts';
 import { GateTable } from './gate-table.tsx';
 
+/** Figures of the register that stand for themselves, in this order. */
+const standing = ['error-per-gate', 'readout-loss', 'output-error'] as const;
+
 /** Figures of single gates, and those of the register that stand for themselves. */
 export function GatesSection({ entry }: { entry: Entry }) {
   const figures = useMemo(() => gateFigures(entry), [entry]);
-  const single = entry.figures.filter((f) => f.key === 'error-per-gate' || f.key === 'readout-loss' || (f.key === 'output-error' && f.depth === 16));
+  const single = standing.flatMap((key) => entry.figures.filter((f) => f.key === key && (f.depth === null || f.depth === 16)));
   const notes = angleNotes(entry);
   return (
     <Section title="Gates and readout" aside="Figures that no choice of gauge can alter." className="flow"
       notes={<>{notes.map((note) => <p key={note.gate}><strong>{note.gate}</strong> {note.sentence}</p>)}<p>Gate loss hardly sees a small wrong angle, which is why the two are shown apart.</p></>}>
-      <GateTable figures={figures} />
+      <GateTable figures={figures} register={entry.register.length > 1} />
       <dl className="trio">
         {single.map((figure) => (
           <div key={`${figure.key}-${figure.depth}-${figure.qubits.join('-')}`}>

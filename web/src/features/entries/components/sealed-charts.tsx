@@ -5,6 +5,7 @@ import { upright } from '#web/charts/axis.ts';
 import { ChartFrame } from '#web/charts/chart-frame.tsx';
 import { Points } from '#web/charts/points.tsx';
 import { Stretched, XYPlot } from '#web/charts/xy-plot.tsx';
+import { fileTitle } from '../entry-words.ts';
 import { sealedDrawing } from '../sealed-data.ts';
 
 /** Sealed circuits: predicted against observed, and what is left over beside shot noise. */
@@ -19,14 +20,14 @@ export function SealedCharts({ entry }: { entry: Entry }) {
   const n = points.length;
   return (
     <div className="sealpair">
-      <ChartFrame title="Predicted and observed" table={table} fileName={`${stem}-observed`}
+      <ChartFrame title="Predicted and observed" fileTitle={fileTitle(entry, 'sealed circuits, predicted and observed')} table={table} fileName={`${stem}-observed`}
         says={`Each point is one sealed circuit. On the thin line observation and prediction agree.`}>
         <XYPlot x={share} y={observed} xTitle="Predicted" yTitle={`Observed share of ${of}`} height="mid" verticals label={`Observed against predicted share, ${n} sealed circuits`}>
           <Stretched><path className="edgeline" d={`M${share.at(0)} ${observed.at(0)}L${share.at(1)} ${observed.at(1)}`} /></Stretched>
           <Points label="Sealed circuits" points={points.map((p) => ({ key: p.id, label: p.label, draw: <circle className="pt" cx={`${share.at(p.predicted)}%`} cy={`${observed.at(p.observed)}%`} r="3.5" /> }))} />
         </XYPlot>
       </ChartFrame>
-      <ChartFrame title="What is left over" table={table} fileName={`${stem}-left-over`}
+      <ChartFrame title="What is left over" fileTitle={fileTitle(entry, 'sealed circuits, observed minus predicted')} table={table} fileName={`${stem}-left-over`}
         says={`The grey range holds 95 % of points that only shot noise of ${formatCount(shots)} shots moves, so about one in twenty falls outside by chance; here ${outside === 0 ? 'none does' : `${countInWords(outside)} of ${countInWords(n)} ${plural(outside, 'does', 'do')}`}. Agreement here does not prove that longer circuits would agree.`}>
         <XYPlot x={residual.x} y={residual.y} xTitle={`Predicted share of ${of}`} yTitle="Observed minus predicted" height="mid" label={`Observed minus predicted share, ${n} sealed circuits. ${capitalise(countInWords(outside))} outside the range of shot noise`}>
           <Stretched><path className="b95" d={ellipse.fill} /><path className="edgeline" d={ellipse.upper} /><path className="edgeline" d={ellipse.lower} /></Stretched>
