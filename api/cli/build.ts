@@ -27,7 +27,7 @@ const buildServer = async (): Promise<void> => {
   const { build } = await import('esbuild');
   await build({
     entryPoints: { server: 'api/server.ts', worker: 'api/worker.ts', thread: 'api/jobs/thread.ts' },
-    outdir: 'dist/api', bundle: true, platform: 'node', target: 'node20', format: 'esm', packages: 'external', sourcemap: 'linked', logLevel: 'warning',
+    outdir: 'dist/api', bundle: true, platform: 'node', target: 'node20.19', format: 'esm', packages: 'external', sourcemap: 'linked', logLevel: 'warning',
   });
 };
 
