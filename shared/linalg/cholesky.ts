@@ -12,30 +12,33 @@ export class Cholesky {
   readonly n: number;
   private readonly store: PanelStore;
 
-  private constructor(n: number, lower: Float64Array, plain: boolean) {
+  private constructor(n: number, store: PanelStore) {
     this.n = n;
-    this.store = new PanelStore(2 * n * n, n, plain);
-    this.store.matrix.set(lower);
-    const upper = this.store.matrix.subarray(n * n);
+    this.store = store;
+    const lower = store.matrix;
+    const upper = lower.subarray(n * n);
     for (let i = 0; i < n; i++) for (let j = 0; j <= i; j++) upper[j * n + i] = lower[i * n + j]!;
   }
 
-  /** Reads the lower triangle of `a` (n×n row-major) and overwrites it; null when a pivot is not positive. */
+  /** Reads the lower triangle of `a` (n×n row-major); null when a pivot is not positive. */
   static factor(a: Float64Array, n: number, plain = false): Cholesky | null {
+    const store = new PanelStore(2 * n * n, 2 * n, plain);
+    store.matrix.set(a.subarray(0, n * n));
+    const l = store.matrix;
     for (let j0 = 0; j0 < n; j0 += BLOCK) {
       const j1 = Math.min(n, j0 + BLOCK);
-      for (let i = j0; i < n; i++) subtractRowProducts(a, n, i, j0, Math.min(j1, i + 1), j0);
+      if (j0 > 0) subtractEarlier(store, n, j0, j1);
       for (let i = j0; i < n; i++) {
         for (let j = j0; j < Math.min(j1, i + 1); j++) {
-          let s = a[i * n + j]!;
-          for (let k = j0; k < j; k++) s -= a[i * n + k]! * a[j * n + k]!;
-          if (i > j) a[i * n + j] = s / a[j * n + j]!;
+          let s = l[i * n + j]!;
+          for (let k = j0; k < j; k++) s -= l[i * n + k]! * l[j * n + k]!;
+          if (i > j) l[i * n + j] = s / l[j * n + j]!;
           else if (!(s > 0) || !Number.isFinite(s)) return null;
-          else a[i * n + i] = Math.sqrt(s);
+          else l[i * n + i] = Math.sqrt(s);
         }
       }
     }
-    return new Cholesky(n, a, plain);
+    return new Cholesky(n, store);
   }
 
   /** Overwrites each of `groups` groups (n×4 interleaved, one after another) by the solution of A·x = b. */
@@ -90,29 +93,22 @@ function divideFour(x: Float64Array, at: number, by: number): void {
   x[at + 3]! /= by;
 }
 
-/** a[i][j] −= Σ_{k < span} a[i][k]·a[j][k] for j0 ≤ j < j1: the part of the factorisation that carries the cost. */
-function subtractRowProducts(a: Float64Array, n: number, i: number, j0: number, j1: number, span: number): void {
-  const p = i * n;
-  let j = j0;
-  for (; j + 3 < j1; j += 4) {
-    const q0 = j * n, q1 = q0 + n, q2 = q1 + n, q3 = q2 + n;
-    let s0 = 0, s1 = 0, s2 = 0, s3 = 0;
-    for (let k = 0; k < span; k++) {
-      const v = a[p + k]!;
-      s0 += v * a[q0 + k]!;
-      s1 += v * a[q1 + k]!;
-      s2 += v * a[q2 + k]!;
-      s3 += v * a[q3 + k]!;
-    }
-    a[p + j]! -= s0;
-    a[p + j + 1]! -= s1;
-    a[p + j + 2]! -= s2;
-    a[p + j + 3]! -= s3;
+/** l[i][j] −= Σ_{k < j0} l[i][k]·l[j][k] for columns j0 … j1 and the rows from j0 on: the part that carries the cost. */
+function subtractEarlier(store: PanelStore, n: number, j0: number, j1: number): void {
+  const { matrix, vectors } = store;
+  const groups = Math.ceil((j1 - j0) / 4);
+  const images = groups * n * 4;
+  vectors.fill(0, 0, 2 * images);
+  for (let j = j0; j < j1; j++) {
+    const at = ((j - j0) >> 2) * n * 4 + ((j - j0) & 3);
+    for (let k = 0; k < j0; k++) vectors[at + 4 * k] = matrix[j * n + k]!;
   }
-  for (; j < j1; j++) {
-    const q = j * n;
-    let s = 0;
-    for (let k = 0; k < span; k++) s += a[p + k]! * a[q + k]!;
-    a[p + j]! -= s;
+  for (let k0 = 0; k0 < j0; k0 += SPAN) {
+    const k1 = Math.min(j0, k0 + SPAN);
+    for (let g = 0; g < groups; g++) store.subtract(0, n, j0, n, k0, k1, g * n * 4, images + g * n * 4);
+  }
+  for (let j = j0; j < j1; j++) {
+    const at = images + ((j - j0) >> 2) * n * 4 + ((j - j0) & 3);
+    for (let i = j; i < n; i++) matrix[i * n + j]! += vectors[at + 4 * i]!;
   }
 }

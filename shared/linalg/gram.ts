@@ -1,3 +1,4 @@
+import { HELD_GROUPS, PanelStore } from '#shared/linalg/panel-store.ts';
 import type { SparseRows } from '#shared/linalg/sparse.ts';
 
 /** Above this share of non-zeros the dense blocked product is faster than walking the entries. */
@@ -18,50 +19,54 @@ export function addGram(a: SparseRows, out: Float64Array): void {
     return;
   }
   const { start, index, value } = a;
-  for (let i = 0; i < a.rows; i++) {
+  for (let i = 0; i < a.rows; ) {
     const first = start[i]!;
-    const end = start[i + 1]!;
-    for (let e = first; e < end; e++) {
-      const v = value[e]!;
+    const length = start[i + 1]! - first;
+    // The outcomes of one circuit often fill the same columns: three rows then share one pass over the sums.
+    const three = i + 2 < a.rows && sameColumns(a, i, i + 1) && sameColumns(a, i, i + 2);
+    for (let e = first; e < first + length; e++) {
       const row = index[e]! * n;
-      for (let f = first; f <= e; f++) out[row + index[f]!]! += v * value[f]!;
+      const v = value[e]!;
+      if (three) {
+        const w = value[e + length]!;
+        const x = value[e + 2 * length]!;
+        for (let f = first; f <= e; f++) out[row + index[f]!]! += v * value[f]! + w * value[f + length]! + x * value[f + 2 * length]!;
+      } else {
+        for (let f = first; f <= e; f++) out[row + index[f]!]! += v * value[f]!;
+      }
     }
+    i += three ? 3 : 1;
   }
 }
 
+function sameColumns({ start, index }: SparseRows, i: number, j: number): boolean {
+  const length = start[i + 1]! - start[i]!;
+  if (start[j + 1]! - start[j]! !== length) return false;
+  for (let e = 0; e < length; e++) if (index[start[i]! + e] !== index[start[j]! + e]) return false;
+  return true;
+}
+
 /**
- * Adds scale·X·Xᵀ to the lower triangle of `out`: X is n×m row-major, so that both factors run along memory.
- * Tiles of 2×4 stay in registers. Cost n²m/2 multiply-adds.
+ * Adds scale·X·Xᵀ to the lower triangle of `out`: X is n×m row-major. Sixty-four columns of the product at a time go through
+ * the panel kernel. Cost n²m/2 multiply-adds.
  */
 export function addRowProducts(x: Float64Array, n: number, m: number, scale: number, out: Float64Array): void {
-  const SPAN = 512;
-  for (let k0 = 0; k0 < m; k0 += SPAN) {
-    const k1 = Math.min(m, k0 + SPAN);
-    for (let i = 0; i < n; i++) {
-      const p = i * m;
-      let j = 0;
-      for (; j + 3 <= i; j += 4) {
-        const q0 = j * m, q1 = q0 + m, q2 = q1 + m, q3 = q2 + m;
-        let s0 = 0, s1 = 0, s2 = 0, s3 = 0;
-        for (let k = k0; k < k1; k++) {
-          const v = x[p + k]!;
-          s0 += v * x[q0 + k]!;
-          s1 += v * x[q1 + k]!;
-          s2 += v * x[q2 + k]!;
-          s3 += v * x[q3 + k]!;
-        }
-        const o = i * n + j;
-        out[o]! += scale * s0;
-        out[o + 1]! += scale * s1;
-        out[o + 2]! += scale * s2;
-        out[o + 3]! += scale * s3;
-      }
-      for (; j <= i; j++) {
-        const q = j * m;
-        let s = 0;
-        for (let k = k0; k < k1; k++) s += x[p + k]! * x[q + k]!;
-        out[i * n + j]! += scale * s;
-      }
+  const store = new PanelStore(n * m, n + m);
+  store.matrix.set(x);
+  const { vectors } = store;
+  const images = HELD_GROUPS * m * 4;
+  const width = 4 * HELD_GROUPS;
+  for (let j0 = 0; j0 < n; j0 += width) {
+    const groups = Math.ceil(Math.min(width, n - j0) / 4);
+    vectors.fill(0);
+    for (let j = j0; j < Math.min(n, j0 + width); j++) {
+      const at = ((j - j0) >> 2) * m * 4 + ((j - j0) & 3);
+      for (let k = 0; k < m; k++) vectors[at + 4 * k] = x[j * m + k]!;
+    }
+    for (let g = 0; g < groups; g++) store.subtract(0, m, j0, n, 0, m, g * m * 4, images + g * n * 4);
+    for (let j = j0; j < Math.min(n, j0 + width); j++) {
+      const at = images + ((j - j0) >> 2) * n * 4 + ((j - j0) & 3);
+      for (let i = j; i < n; i++) out[i * n + j]! -= scale * vectors[at + 4 * i]!;
     }
   }
 }

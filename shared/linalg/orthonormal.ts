@@ -26,20 +26,20 @@ export function orthonormalBasis(vectors: Float64Array, count: number, length: n
     const scale = 1 / Math.sqrt(squared(basis, at, length));
     for (let k = 0; k < length; k++) basis[at + k]! *= scale;
     for (const i of left) {
-      project(basis, at, vectors, i * length, length);
-      size[i] = squared(vectors, i * length, length);
+      if (project(basis, at, vectors, i * length, length)) size[i] = squared(vectors, i * length, length);
     }
     dimension++;
   }
   return { basis: basis.slice(0, dimension * length), dimension };
 }
 
-/** v −= (q·v)·q. */
-function project(q: Float64Array, qAt: number, v: Float64Array, vAt: number, length: number): void {
+/** v −= (q·v)·q; false where they are orthogonal to begin with, as most gauge directions of Clifford gates are. */
+function project(q: Float64Array, qAt: number, v: Float64Array, vAt: number, length: number): boolean {
   let dot = 0;
   for (let k = 0; k < length; k++) dot += q[qAt + k]! * v[vAt + k]!;
-  if (dot === 0) return;
+  if (dot === 0) return false;
   for (let k = 0; k < length; k++) v[vAt + k]! -= dot * q[qAt + k]!;
+  return true;
 }
 
 function squared(v: Float64Array, at: number, length: number): number {
