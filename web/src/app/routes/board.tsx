@@ -27,7 +27,7 @@ export function Component() {
   // The board read last stays while another figure or filter is fetched.
   const query = useQuery({ ...boardQuery(gateClass, viewOf(search)), placeholderData: (before, last) => (last?.queryKey[1] === gateClass ? keepPreviousData(before) : undefined) });
   return (
-    <>
+    <div className="p-board">
       <Wrap>
         {query.data ? <BoardHead board={query.data} /> : <PageHead above={<Link to="/boards">Boards</Link>} title={query.isError ? 'Board' : gateClass} />}
         <BoardFilters filters={query.data?.filters} />
@@ -49,6 +49,6 @@ export function Component() {
         </Section>
       </Wrap>
       <OwnTray />
-    </>
+    </div>
   );
 }
