@@ -1,15 +1,14 @@
-import { randomUUID } from 'node:crypto';
 import { submissionIdOf } from '#shared/domain/ids.ts';
 import { AppError } from '#shared/errors/app-error.ts';
 import { Organisation } from '#api/entities/organisation.ts';
 import { Submission } from '#api/entities/submission.ts';
 import { requireActor } from '#api/lib/actor.ts';
 import { nextNumber } from '#api/lib/names.ts';
-import { runSql } from '#api/lib/run-sql.ts';
 import { inTransaction, type Work } from '#api/lib/work.ts';
 import type { Inspected } from './inspection.ts';
 import { beginChecks, lockSubmission, receive, replace } from './life-cycle.ts';
 import { explainUnique, placeDataset } from './place.ts';
+import { storeFile } from './store-file.ts';
 
 export const usualReplicates = 2000;
 
@@ -36,14 +35,6 @@ export const inspectDataset = async (work: Work, bytes: Uint8Array): Promise<Ins
   const inspection = await work.runInThread('inspect-dataset', { bytes });
   if (!inspection.ok) throw new AppError(inspection.code, inspection.message, inspection.details);
   return inspection;
-};
-
-const storeFile = async ({ em, clock }: Work, submission: string, round: number, file: DatasetFile, seen: Inspected): Promise<string> => {
-  const id = randomUUID();
-  await runSql(em, 'insert into submission_file (id, submission_id, round, name, bytes, size, content_id, bytes_sha256, summary, received_at) values ($1, $2, $3, $4, $5, $6, $7, $8, $9, $10)', [
-    id, submission, round, file.name, file.bytes, file.bytes.byteLength, seen.contentId, seen.bytesSha256, JSON.stringify(seen.summary), clock.now(),
-  ]);
-  return id;
 };
 
 const startEstimate = async (work: Work, submission: Submission): Promise<void> => {

@@ -1,9 +1,12 @@
+import { createHash } from 'node:crypto';
+import { gzipSync } from 'node:zlib';
 import { beforeAll, describe, expect, it } from 'vitest';
 import { bytesOf, makeDataset, makeDesk, makeDrawnSheet, sendFile, workFor, type Desk } from '#tests/support/record.ts';
 import { addMember, makeOrganisation, makeToken, makeUser } from '#tests/support/people.ts';
 import { asStranger, signInAs, withToken } from '#tests/support/sign-in.ts';
 import { useTestApp } from '#tests/support/test-app.ts';
 import { accepted, receive, stateOf } from '#tests/support/life.ts';
+import { runEstimate } from '#api/modules/submissions/run-estimate.ts';
 import { cancelSubmission } from '#api/modules/submissions/service.ts';
 
 const app = useTestApp();
@@ -66,6 +69,20 @@ describe('sending a dataset', () => {
     expect((await desk.client('get', `/api/v1/run-sheets/${sheet.id}`)).body).toMatchObject({ submission: id });
     await cancelSubmission(await workFor(app(), desk.contributor), id);
     expect((await sendFile(desk.client, 'post', address, bytesOf(makeDataset(desk, sheet)), { 'idempotency-key': 'sheet-2' })).status).toBe(202);
+  });
+
+  it('keeps a file of several MiB, which goes to the database in pieces, byte for byte, also as a replacement', async () => {
+    const big = (letter: string): Buffer => bytesOf(makeDataset(desk, null, { device: { provider: desk.organisation.name, name: 'Nowhere-1', modality: 'spin' }, extra: { log: letter.repeat(3_400_000) } }));
+    const [first, second] = [big('a'), big('b')];
+    const sent = await sendFile(desk.client, 'post', address, gzipSync(first), { 'idempotency-key': 'big', 'content-encoding': 'gzip' });
+    expect(sent.status, JSON.stringify(sent.body)).toBe(202);
+    const { id } = sent.body as { id: string };
+    await runEstimate(await workFor(app(), null), id, 1);
+    expect((await sendFile(desk.client, 'put', `${address}/${id}/dataset`, second)).status).toBe(202);
+    const { rows } = await app().deps.pool.query<{ bytes: Buffer; size: number; bytes_sha256: string }>('select bytes, size, bytes_sha256 from submission_file where submission_id = $1 order by round', [id]);
+    expect(rows.map((r, i) => [Buffer.compare(r.bytes, i === 0 ? first : second), createHash('sha256').update(r.bytes).digest('hex') === r.bytes_sha256])).toEqual([[0, true], [0, true]]);
+    const read = await desk.client('get', `${address}/${id}/dataset`).buffer(true);
+    expect(read.text).toBe(second.toString());
   });
 
   it('takes an API token of the organisation and writes down for whom it acted', async () => {
