@@ -1,7 +1,8 @@
 import { z } from 'zod';
 import { deviceRef, figure, modality, timestamp } from './common.ts';
 
-export const deviceSummary = deviceRef.extend({ entries: z.number().int(), lastEntryAt: timestamp.nullable() });
+/** GET /api/v1/devices : every device with a public entry, by its id. */
+export const deviceSummary = deviceRef.extend({ entries: z.number().int(), lastEntryAt: timestamp.nullable(), /** Its entries are demonstration data. */ demo: z.boolean() });
 export const deviceList = z.object({ items: z.array(deviceSummary), nextCursor: z.string().nullable() });
 
 /** GET /api/v1/devices/{id} : a device and its public entries, oldest first, each with its headline figure. */

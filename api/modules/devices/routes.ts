@@ -1,32 +1,51 @@
+import type { EntityManager, FilterQuery, QueryOrderMap } from '@mikro-orm/postgresql';
 import { z } from 'zod';
-import { device, deviceCreate, deviceList, deviceSummary } from '#shared/contracts/devices.ts';
+import { pageQuery } from '#shared/contracts/common.ts';
+import { device, deviceCreate, deviceList, deviceSummary, type DeviceSummary } from '#shared/contracts/devices.ts';
 import { AppError } from '#shared/errors/app-error.ts';
 import { Device } from '#api/entities/device.ts';
+import { pageFrom, readCursor } from '#api/lib/cursor.ts';
 import { defineRoute, type Route } from '#api/lib/define-route.ts';
 import { reply } from '#api/lib/reply.ts';
 import { workOf } from '#api/lib/work-of.ts';
-import { presentHistory, publicCounts } from './history.ts';
+import { devicesWithEntries, noCounts, presentHistory, publicCounts } from './history.ts';
 import { findOrganisation } from './owner.ts';
 import { presentDevice } from './presenter.ts';
 import { createDevice } from './service.ts';
+
+const summarise = async (em: EntityManager, which: FilterQuery<Device>, orderBy: QueryOrderMap<Device>): Promise<DeviceSummary[]> => {
+  const devices = await em.find(Device, which, { populate: ['organisation'], orderBy });
+  const counts = await publicCounts(em, devices.map((d) => d.id));
+  return devices.map((d) => ({ ...presentDevice(d), ...(counts.get(d.id) ?? noCounts) }));
+};
 
 export const deviceRoutes: Route[] = [
   defineRoute({
     method: 'get',
     path: '/api/v1/devices',
+    action: 'public.read',
+    summary: 'Every device with a public entry, by its id.',
+    query: pageQuery,
+    response: deviceList,
+    handler: async ({ em, query }) => {
+      const [after = ''] = readCursor(query.cursor, 1) ?? [];
+      const ids = await devicesWithEntries(em, after, query.limit + 1);
+      const page = pageFrom(ids, query.limit, (id) => [id], (id) => id);
+      return { items: await summarise(em, { id: { $in: page.items } }, { id: 'asc' }), nextCursor: page.nextCursor };
+    },
+  }),
+  defineRoute({
+    method: 'get',
+    path: '/api/v1/organisations/:organisation/devices',
     action: 'device.list-own',
     summary: 'The devices of an organisation, those without an entry among them.',
-    query: z.object({ organisation: z.string().max(64) }),
+    params: z.object({ organisation: z.string().max(64) }),
     response: deviceList,
-    load: async ({ em, query }) => {
-      const organisation = await findOrganisation(em, query.organisation);
+    load: async ({ em, params }) => {
+      const organisation = await findOrganisation(em, params.organisation);
       return { thing: { owner: organisation.id } };
     },
-    handler: async ({ em, loaded }) => {
-      const devices = await em.find(Device, { organisation: loaded.thing.owner }, { populate: ['organisation'], orderBy: { name: 'asc' } });
-      const counts = await publicCounts(em, devices.map((d) => d.id));
-      return { items: devices.map((d) => ({ ...presentDevice(d), ...(counts.get(d.id) ?? { entries: 0, lastEntryAt: null }) })), nextCursor: null };
-    },
+    handler: async ({ em, loaded }) => ({ items: await summarise(em, { organisation: loaded.thing.owner }, { name: 'asc' }), nextCursor: null }),
   }),
   defineRoute({
     method: 'post',
@@ -42,7 +61,7 @@ export const deviceRoutes: Route[] = [
     },
     handler: async (scope) => {
       const made = await createDevice(workOf(scope), { organisation: scope.loaded.organisation.id, name: scope.body.name, modality: scope.body.modality });
-      return reply({ ...presentDevice(made), entries: 0, lastEntryAt: null }, { status: 201, headers: { location: `/api/v1/devices/${made.id}` } });
+      return reply({ ...presentDevice(made), ...noCounts }, { status: 201, headers: { location: `/api/v1/devices/${made.id}` } });
     },
   }),
   defineRoute({

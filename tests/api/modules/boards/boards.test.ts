@@ -78,6 +78,12 @@ describe('lists of boards, classes and a device', () => {
     const told = deviceContract.parse(body);
     expect(names(told.history)).toEqual(['older', 'best', 'otherQubit']);
     expect(told.entries).toBe(3);
+    const list = async (query: string) => (await asStranger(app())('get', `/api/v1/devices${query}`)).body as { items: { id: string; entries: number }[]; nextCursor: string | null };
+    const all = await list('');
+    expect(all.items.find((d) => d.id === told.id)).toMatchObject({ entries: 3, demo: false });
+    const first = await list('?limit=1');
+    expect(first.items).toEqual(all.items.slice(0, 1));
+    expect((await list(`?limit=200&cursor=${first.nextCursor}`)).items).toEqual(all.items.slice(1));
     expect(told.history.every((h) => h.headline?.depth === 16)).toBe(true);
   });
 });

@@ -43,12 +43,14 @@ describe('API tokens', () => {
 describe('devices', () => {
   it('are registered under an address made of provider and name, once', async () => {
     const made = await desk.client('post', '/api/v1/devices').send({ organisation: desk.organisation.id, name: 'Größe 7 (left)', modality: 'photonic' });
-    expect([made.status, made.body]).toEqual([201, { id: `${desk.organisation.slug}-gro-e-7-left`, name: 'Größe 7 (left)', modality: 'photonic', provider: { id: desk.organisation.slug, name: desk.organisation.name }, entries: 0, lastEntryAt: null }]);
+    expect([made.status, made.body]).toEqual([201, { id: `${desk.organisation.slug}-gro-e-7-left`, name: 'Größe 7 (left)', modality: 'photonic', provider: { id: desk.organisation.slug, name: desk.organisation.name }, entries: 0, lastEntryAt: null, demo: false }]);
     for (const name of ['Größe 7 (left)', 'gro e 7 LEFT']) expect((await desk.client('post', '/api/v1/devices').send({ organisation: desk.organisation.id, name, modality: 'spin' })).body, name).toMatchObject({ status: 409, code: 'already-exists' });
     expect((await desk.client('post', '/api/v1/devices').send({ organisation: desk.organisation.id, name: '——', modality: 'spin' })).body).toMatchObject({ status: 400, errors: [{ pointer: '/name' }] });
     expect((await other.client('post', '/api/v1/devices').send({ organisation: desk.organisation.id, name: 'Y-1', modality: 'spin' })).status).toBe(403);
-    const list = (await desk.client('get', `/api/v1/devices?organisation=${desk.organisation.slug}`)).body as { items: { id: string }[] };
+    const list = (await desk.client('get', `/api/v1/organisations/${desk.organisation.slug}/devices`)).body as { items: { id: string }[] };
     expect(list.items.map((d) => d.id)).toContain(`${desk.organisation.slug}-gro-e-7-left`);
+    expect((await other.client('get', `/api/v1/organisations/${desk.organisation.slug}/devices`)).status).toBe(403);
+    expect((await asStranger(app())('get', '/api/v1/devices')).body).toEqual({ items: [], nextCursor: null });
     expect((await asStranger(app())('get', `/api/v1/devices/${desk.device.id}`)).body).toMatchObject({ name: desk.device.name, entries: 0, history: [] });
     expect((await asStranger(app())('get', '/api/v1/devices/nothing')).status).toBe(404);
   });

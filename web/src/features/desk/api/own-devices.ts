@@ -7,6 +7,6 @@ const address = '/api/v1/devices';
 
 /** The devices of one organisation, those without an entry among them. */
 export const ownDevicesQuery = (organisation: string) =>
-  queryOptions({ queryKey: ['own-devices', organisation], queryFn: ({ signal }) => apiGet(address, deviceList, { query: { organisation }, signal }) });
+  queryOptions({ queryKey: ['own-devices', organisation], queryFn: ({ signal }) => apiGet(`/api/v1/organisations/${encodeURIComponent(organisation)}/devices`, deviceList, { signal }) });
 
 export const addDevice = (device: z.infer<typeof deviceCreate>): Promise<DeviceSummary> => apiSend('POST', address, deviceSummary, { json: device });
