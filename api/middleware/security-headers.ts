@@ -8,7 +8,8 @@ export const securityHeaders = (secure: boolean): RequestHandler =>
       useDefaults: false,
       directives: {
         defaultSrc: ["'none'"],
-        scriptSrc: ["'self'"],
+        // The method's kernels are WebAssembly, run in the reader's own browser. No script text is ever evaluated.
+        scriptSrc: ["'self'", "'wasm-unsafe-eval'"],
         styleSrc: ["'self'"],
         fontSrc: ["'self'"],
         imgSrc: ["'self'", 'data:'],

@@ -19,32 +19,30 @@ const accepted = (s: Submission): JsonReply<z.input<typeof submissionAccepted>> 
   return reply({ id: s.id, state: s.state, href }, { status: 202, headers: { location: href } });
 };
 
-/** PUT takes the same file under both names: the one of the entry's address, and the one of the submission's own list. */
-const replaceRoute = (name: 'dataset' | 'file'): Route =>
-  defineRoute({
-    method: 'put',
-    path: `/api/v1/submissions/:id/${name}`,
-    action: 'submission.replace',
-    summary: 'A corrected file for a submission that was blocked or returned, or is ready: a new round of checks.',
-    params: z.object({ id: z.string().max(20) }),
-    query: uploadQuery,
-    raw: { types },
-    response: submissionAccepted,
-    status: 202,
-    load: async ({ em, params }) => {
-      const found = await findSubmission(em, params.id);
-      return { thing: { owner: found.organisation.id, state: found.state } };
-    },
-    handler: async (scope) => {
-      const { params, query, raw, header } = scope;
-      const key = readIdempotencyKey(header('idempotency-key'), false);
-      const upload = await readUpload(raw);
-      const name = fileNameOf({ query: query.fileName, header, unpacked: raw.contentEncoding === 'gzip' });
-      // Read before the transaction: a large file takes seconds, and no connection should wait for it.
-      const seen = await inspectDataset(workOf(scope), upload.bytes);
-      return idempotently(workOf(scope), { key, fingerprint: fingerprintOf('PUT', params.id, upload.sha256) }, async (work) => accepted(await replaceDataset(work, params.id, { bytes: upload.bytes, name, seen })));
-    },
-  });
+const replaceRoute = defineRoute({
+  method: 'put',
+  path: '/api/v1/submissions/:id/dataset',
+  action: 'submission.replace',
+  summary: 'A corrected file for a submission that was blocked or returned, or is ready: a new round of checks.',
+  params: z.object({ id: z.string().max(20) }),
+  query: uploadQuery,
+  raw: { types },
+  response: submissionAccepted,
+  status: 202,
+  load: async ({ em, params }) => {
+    const found = await findSubmission(em, params.id);
+    return { thing: { owner: found.organisation.id, state: found.state } };
+  },
+  handler: async (scope) => {
+    const { params, query, raw, header } = scope;
+    const key = readIdempotencyKey(header('idempotency-key'), false);
+    const upload = await readUpload(raw);
+    const name = fileNameOf({ query: query.fileName, header, unpacked: raw.contentEncoding === 'gzip' });
+    // Read before the transaction: a large file takes seconds, and no connection should wait for it.
+    const seen = await inspectDataset(workOf(scope), upload.bytes);
+    return idempotently(workOf(scope), { key, fingerprint: fingerprintOf('PUT', params.id, upload.sha256) }, async (work) => accepted(await replaceDataset(work, params.id, { bytes: upload.bytes, name, seen })));
+  },
+});
 
 export const uploadRoutes: Route[] = [
   defineRoute({
@@ -75,6 +73,5 @@ export const uploadRoutes: Route[] = [
         accepted(await receiveSubmission(work, { organisation, bytes: upload.bytes, name, seen, correctionOf })));
     },
   }),
-  replaceRoute('dataset'),
-  replaceRoute('file'),
+  replaceRoute,
 ];

@@ -19,7 +19,7 @@ export type Target = { kind: 'new'; organisation: string } | { kind: 'replace'; 
 const addressOf = (target: Target): { method: 'POST' | 'PUT'; address: string; owner: string } =>
   target.kind === 'new'
     ? { method: 'POST', address: `${submissionsAddress}?organisation=${encodeURIComponent(target.organisation)}`, owner: target.organisation }
-    : { method: 'PUT', address: `${submissionsAddress}/${target.submission}/file`, owner: target.submission };
+    : { method: 'PUT', address: `${submissionsAddress}/${target.submission}/dataset`, owner: target.submission };
 
 /** A header holds no line breaks and no letters beyond Latin-1: the name travels percent-encoded (RFC 8187). */
 const disposition = (name: string): string => `attachment; filename*=UTF-8''${encodeURIComponent(name).replace(/['()*]/g, (c) => `%${c.charCodeAt(0).toString(16).toUpperCase()}`)}`;
