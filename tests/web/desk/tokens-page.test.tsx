@@ -12,7 +12,7 @@ describe('the tokens of an organisation', () => {
     const user = userEvent.setup();
     const asked = answerWith({ 'GET /api/v1/me': contributor, 'GET /api/v1/tokens': tokens, 'POST /api/v1/tokens': made });
     drawAt(<TokensPage organisation={larkspur} />);
-    await screen.findByText('Cryostat pipeline');
+    await screen.findByRole('rowheader', { name: /^Cryostat pipeline/ });
     await user.click(screen.getByRole('button', { name: 'Make a token' }));
     expect(await screen.findByText('Name the token after what will use it.')).toBeTruthy();
     await user.type(screen.getByLabelText('What will use it'), 'Night run{Enter}');

@@ -28,7 +28,7 @@ export function Confirm({ ask, about, children, act, keep = 'Keep it', busy = fa
     else if (wasAsked.current) opener.current?.querySelector('button')?.focus();
     wasAsked.current = asked;
   }, [asked]);
-  if (!asked) return <span ref={opener}><Button onClick={() => setAsked(true)}>{ask}{about ? <VisuallyHidden> {about}</VisuallyHidden> : null}</Button></span>;
+  if (!asked) return <span ref={opener}><Button onClick={() => setAsked(true)}>{ask}{about ? <>{' '}<VisuallyHidden>{about}</VisuallyHidden></> : null}</Button></span>;
   return (
     // Escape leaves the question; the buttons inside do the rest.
     // eslint-disable-next-line jsx-a11y/no-noninteractive-element-interactions
