@@ -14,17 +14,38 @@ const columns: readonly Column<Left>[] = [
   { id: 'remedy', header: 'What would change it', cell: ({ reasons }) => <Lines of={[...new Set(reasons.map((r) => r.remedy))]} /> },
 ];
 
+/** A sentence whose accessions do not break across lines. */
+const unbroken = (sentence: string) => sentence.split(/(EVB-\d+(?:\.\d+)?)/).map((part, i) => (i % 2 === 1 ? <span key={part} className="nowrap">{part}</span> : part));
+
 function Lines({ of: lines }: { of: readonly string[] }) {
-  return lines.length === 1 ? <>{lines[0]}</> : <span className="lines">{lines.map((line) => <span key={line}>{line}</span>)}</span>;
+  return lines.length === 1 ? <>{unbroken(lines[0] ?? '')}</> : <span className="lines">{lines.map((line) => <span key={line}>{unbroken(line)}</span>)}</span>;
 }
 
-/** Public and citable, but not taken on equal terms: each with its reason and what would change it. */
+/** Left off for no other reason than that the device has a newer entry. */
+const onlyEarlier = ({ reasons }: Left): boolean => reasons.every(({ code }) => code === 'newer');
+
+const keyOf = ({ row }: Left): string => row.accession;
+const countOf = (items: readonly Left[]): string => `${formatCount(items.length)} ${plural(items.length, 'entry', 'entries')}`;
+
+/** Public and citable, but not on the board: first those not taken on equal terms, each with its reason; folded away below, the earlier entries of devices that have a newer one. */
 export function NotListed({ items }: { items: readonly Left[] }) {
+  const earlier = items.filter(onlyEarlier);
+  const unequal = items.filter((item) => !onlyEarlier(item));
   if (items.length === 0) return null;
   return (
-    <Section title="Not listed" aside={`${formatCount(items.length)} ${plural(items.length, 'entry', 'entries')}`} className="flow">
-      <p className="prose">These entries are public and can be cited. They are left off the board because they were not taken on equal terms, and each reason is given.</p>
-      <DataTable caption="Entries that are not listed, with the reason" captionHidden columns={columns} rows={items} rowKey={({ row }) => row.accession} tight />
+    <Section title="Not listed" aside={countOf(items)} className="flow">
+      {unequal.length > 0 ? (
+        <>
+          <p className="prose">These entries are public and can be cited. They are left off the board because they were not taken on equal terms, and each reason is given.</p>
+          <DataTable caption="Entries that are not listed, with the reason" captionHidden columns={columns} rows={unequal} rowKey={keyOf} tight />
+        </>
+      ) : null}
+      {earlier.length > 0 ? (
+        <details className="earlier">
+          <summary>Earlier entries of devices that have a newer one: {countOf(earlier)}</summary>
+          <DataTable caption="Earlier entries, each with the newer one that stands in its place" captionHidden columns={columns.slice(0, 3)} rows={earlier} rowKey={keyOf} tight />
+        </details>
+      ) : null}
     </Section>
   );
 }

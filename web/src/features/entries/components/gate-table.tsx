@@ -24,6 +24,13 @@ function FigureCells({ figure, axis, decimals, scale = 'plain', name }: { figure
   );
 }
 
+const determined = (figure: EntryFigure | null): boolean => figure !== null && figure.value !== null;
+
+/** No axis over a column in which nothing is determined: its ticks would stand for nothing. */
+function AxisHead({ label, axis, drawn }: { label: string; axis: Axis; drawn: boolean }) {
+  return <th {...r.columnHead} scope="col" className="ax"><span className="lbl">{label}</span>{drawn ? <AxisStrip axis={axis} side="top" /> : null}</th>;
+}
+
 /** Gate loss and angle error side by side, each with one axis for all gates. `register`: gates are named with their qubits. */
 export function GateTable({ figures, register = false }: { figures: GateFigures; register?: boolean }) {
   const { rows, loss, angle } = figures;
@@ -33,9 +40,9 @@ export function GateTable({ figures, register = false }: { figures: GateFigures;
       <thead {...r.group}>
         <tr {...r.row}>
           <th {...r.columnHead} scope="col">Gate</th>
-          <th {...r.columnHead} scope="col" className="ax"><span className="lbl">Gate loss, thousandths</span><AxisStrip axis={loss.axis} side="top" /></th>
+          <AxisHead label="Gate loss, thousandths" axis={loss.axis} drawn={rows.some((row) => determined(row.loss))} />
           <th {...r.columnHead} scope="col">Estimate<span className="unit">95 % interval</span></th>
-          <th {...r.columnHead} scope="col" className="ax"><span className="lbl">Angle error, radians</span><AxisStrip axis={angle.axis} side="top" /></th>
+          <AxisHead label="Angle error, radians" axis={angle.axis} drawn={rows.some((row) => determined(row.angle))} />
           <th {...r.columnHead} scope="col">Estimate<span className="unit">95 % interval</span></th>
         </tr>
       </thead>

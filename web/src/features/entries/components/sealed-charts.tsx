@@ -33,9 +33,9 @@ export function SealedCharts({ entry }: { entry: Entry }) {
           <Stretched><path className="b95" d={ellipse.fill} /><path className="edgeline" d={ellipse.upper} /><path className="edgeline" d={ellipse.lower} /></Stretched>
           <g aria-hidden="true">
             <line className="zero" x1="0" x2="100%" y1={`${residual.y.at(0)}%`} y2={`${residual.y.at(0)}%`} />
-            <text x="50%" y={`${drawing.ellipseTop}%`} dy="-7" textAnchor="middle">shot noise alone, 95 %</text>
           </g>
           <Points label="Sealed circuits" points={points.map((p) => ({ key: p.id, label: p.label, draw: <circle className="pt" cx={`${residual.x.at(p.predicted)}%`} cy={`${residual.y.at(p.left)}%`} r="3.5" /> }))} />
+          <text aria-hidden="true" className="over" x="50%" y={`${drawing.ellipseTop}%`} dy="-7" textAnchor="middle">shot noise alone, 95 %</text>
         </XYPlot>
       </ChartFrame>
     </div>
