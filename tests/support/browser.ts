@@ -2,7 +2,8 @@ import { chromium, type Browser, type BrowserContext, type Page } from 'playwrig
 import { afterAll, afterEach, beforeAll, expect } from 'vitest';
 import { chromiumPath } from '#api/cli/test/chromium.ts';
 
-const args = ['--no-sandbox', '--disable-gpu', '--disable-quic', '--no-first-run', '--disable-background-networking', '--disable-component-update', '--disable-sync'];
+/** Lets Chromium run as root without a display, and ask nothing of the network by itself. */
+export const browserArguments = ['--no-sandbox', '--disable-gpu', '--disable-quic', '--no-first-run', '--disable-background-networking', '--disable-component-update', '--disable-sync'];
 
 /** Widths at which every screen must hold. */
 export const laptop = { width: 1440, height: 900 };
@@ -19,7 +20,7 @@ export const useBrowser = (): ((options?: { viewport?: typeof laptop; colorSchem
   let contexts: BrowserContext[] = [];
   let heard: string[] = [];
   beforeAll(async () => {
-    browser = await chromium.launch({ executablePath: chromiumPath, args });
+    browser = await chromium.launch({ executablePath: chromiumPath, args: browserArguments });
   });
   afterAll(() => browser?.close());
   afterEach(async () => {
