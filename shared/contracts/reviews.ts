@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { deviceRef, gateClassRef, timestamp } from './common.ts';
+import { deviceRef, figure, gateClassRef, timestamp } from './common.ts';
 import { submission } from './submissions.ts';
 
 /** GET /api/v1/reviews : submissions in review that this curator may decide on, oldest first. */
@@ -30,7 +30,8 @@ export const review = z.object({
   claimedByMe: z.boolean(),
   /** Misfit of each block, in order of time, for the drift drawing. */
   drift: z.array(z.object({ block: z.number().int(), sigmas: z.number(), circuits: z.number().int() })),
-  earlier: z.array(z.object({ accession: z.string(), version: z.number().int(), frozenAt: timestamp, value: z.number().nullable(), low95: z.number().nullable(), high95: z.number().nullable() })),
+  /** Public entries of the same device, register and class, oldest first, each with its headline figure. */
+  earlier: z.array(z.object({ accession: z.string(), version: z.number().int(), frozenAt: timestamp, headline: figure.nullable() })),
   may: z.object({ claim: z.boolean(), decide: z.boolean() }),
 });
 

@@ -35,6 +35,8 @@ export const submission = submissionItem.extend({
   round: z.number().int(),
   file: z.object({ name: z.string(), bytes: z.number().int(), circuits: z.number().int(), contentId: sha256, bytesSha256: sha256, href: z.string() }),
   register: z.array(z.string()),
+  /** The declared gates in words: "rx(π/2)". */
+  gates: z.array(z.object({ label: z.string(), words: z.string(), targets: z.array(z.number().int()) })),
   /** Stage of the estimate while checking, in words; null otherwise. */
   stage: z.string().nullable(),
   replicatesDone: z.number().int().nullable(),

@@ -40,11 +40,7 @@ const earlierOf = async (em: EntityManager, s: Submission): Promise<Review['earl
   if (!s.device) return [];
   const rows = await withRows(em, await versionsWith(em, 'device_id', s.device.id));
   const same = rows.filter((v) => v.state !== 'withdrawn' && v.row.gateClass === s.gateClass && JSON.stringify(v.row.register) === JSON.stringify(s.register) && v.row.submissionId !== s.id);
-  return same.map((v) => {
-    const headline = headlineOf(v.row.summary.figures, v.row.register.length);
-    const wide = headline?.intervals?.find((i) => i.level === 0.95);
-    return { accession: v.accession, version: v.version, frozenAt: v.frozenAt.toISOString(), value: headline?.value ?? null, low95: wide?.low ?? null, high95: wide?.high ?? null };
-  });
+  return same.map((v) => ({ accession: v.accession, version: v.version, frozenAt: v.frozenAt.toISOString(), headline: headlineOf(v.row.summary.figures, v.row.register.length) }));
 };
 
 /** What a curator sees of a submission. It comes from `findSubmission`. */

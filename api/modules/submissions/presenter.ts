@@ -61,6 +61,7 @@ export const presentSubmission = async (em: EntityManager, s: Submission, asker:
     round: s.round,
     file: { name: file.name, bytes: file.size, circuits: file.summary.circuits, contentId: file.contentId, bytesSha256: file.bytesSha256, href: `/api/v1/submissions/${s.id}/dataset` },
     register: s.register,
+    gates: file.summary.gates,
     stage: checking && s.stage ? (stageWords[s.stage] ?? s.stage) : null,
     replicatesDone: s.replicatesDone ?? null,
     replicates: s.replicates,

@@ -39,7 +39,7 @@ export function Case({ review }: { review: Review }) {
           <Block title="Sealed circuits"><p className="says">{sealedSentence(s.result.sealedCheck)}</p></Block>
           <Block title="Figures">
             {s.result.warnings.length > 0 ? <Message kind="caution">{s.result.warnings.map((w) => <p key={w}>{w}</p>)}</Message> : null}
-            <PreviewFigures caption="As they will be published" quiet={`by method ${s.result.method}, from ${formatCount(s.result.replicates)} replicates`} rows={figureRows(s.result.figures, s.register)} />
+            <PreviewFigures caption="As they will be published" quiet={`by method ${s.result.method}, from ${formatCount(s.result.replicates)} replicates`} rows={figureRows(s.result.figures, s)} />
           </Block>
           <Block title="Design"><DesignFacts patches={s.result.patches} register={s.register} /></Block>
           <Block title="Earlier entries of the device"><EarlierEntries earlier={earlier} submission={s} /></Block>

@@ -52,7 +52,7 @@ function Body({ submission: s, above }: { submission: Submission; above: React.R
         {s.checks.length === 0 ? <p className="says quiet">The checks have not begun.</p> : <CheckList checks={s.checks} />}
         {s.may.replace ? <ReplaceFile submission={s} /> : null}
       </Section>
-      {s.result ? <PreviewSection result={s.result} register={s.register} open={s.entry !== null && s.state !== 'embargoed'} /> : null}
+      {s.result ? <PreviewSection result={s.result} submission={s} open={s.entry !== null && s.state !== 'embargoed'} /> : null}
       <Section title="Record" aside="Public with the entry." notes={s.may.edit ? <>
         <p><strong>What is asked.</strong> How the device was reached and the contributors’ interests are wanted before a review; the rest may stay empty.</p>
         <p><strong>Embargo.</strong> You may name a date, at most 180 days ahead, before which an accepted entry stays closed.</p>
