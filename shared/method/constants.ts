@@ -26,3 +26,8 @@ export const EXTRAPOLATION = 2;
 
 /** Depths at which figures of bench circuits are given. */
 export const BENCH_DEPTHS = [0, 1, 4, 8, 16, 32, 64] as const;
+
+/** Whole circuits over more qubits than this are not predicted; from the second number on they are read from fewer replicates. */
+export const LARGEST_REGISTER = 8;
+export const LARGE_REGISTER = 5;
+export const LARGE_REPLICATES = 200;

@@ -1,4 +1,4 @@
-import { AppError } from '#shared/errors/app-error.ts';
+import { estimateChained } from '#shared/method/chained.ts';
 import { estimateJoint } from '#shared/method/joint.ts';
 import type { EstimateInput, EstimateOutput } from '#shared/method/types.ts';
 
@@ -9,6 +9,5 @@ import type { EstimateInput, EstimateOutput } from '#shared/method/types.ts';
 export function estimate(input: EstimateInput): EstimateOutput {
   const replicates = input.replicates ?? 1;
   if (!Number.isSafeInteger(replicates) || replicates < 1) throw new RangeError(`replicates must be a whole number from 1 on, not ${String(input.replicates)}`);
-  if (input.dataset.patches.length !== 1) throw new AppError('wrong-state', 'Chained registers are not estimated by this version.');
-  return estimateJoint(input);
+  return input.dataset.patches.length === 1 ? estimateJoint(input) : estimateChained(input);
 }

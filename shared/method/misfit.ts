@@ -1,5 +1,6 @@
 import type { Misfit } from '#shared/formats/types.ts';
 import { multiplyFour } from '#shared/linalg/sparse.ts';
+import { withoutLast } from '#shared/method/frequencies.ts';
 import type { PatchProblem } from '#shared/method/patch-problem.ts';
 import { MultinomialTable } from '#shared/random/multinomial.ts';
 import type { Xoshiro256 } from '#shared/random/xoshiro256.ts';
@@ -11,8 +12,10 @@ import { moments } from '#shared/stats/moments.ts';
  * sigmas = (S − mean)/sd; p = min(1, 2·min(a + 1, B + 1 − a)/(B + 1)), a = draws with S_b ≥ S.
  * High: drift, leakage, crosstalk. Low: less scatter than shot noise allows.
  * @param predicted p̂ of the problem's circuits, circuits × d
+ * @param centreOf in a pair of a chained register: p(ê; locals b) of draw b, the design's rows, subtracted instead of p̂; null
+ *   where the locals have no replicate b, and the draw is left out
  */
-export function misfitOf(problem: PatchProblem, predicted: Float64Array, draws: number, generator: Xoshiro256): Misfit {
+export function misfitOf(problem: PatchProblem, predicted: Float64Array, draws: number, generator: Xoshiro256, centreOf?: (b: number) => Float64Array | null): Misfit {
   const { counts, design, inverse } = problem;
   const { circuits, d, observed, shots } = counts;
   let residualSum = 0;
@@ -22,17 +25,22 @@ export function misfitOf(problem: PatchProblem, predicted: Float64Array, draws: 
   const x = new Float64Array(4 * rows);
   const y = new Float64Array(4 * columns);
   const fitted = new Float64Array(4 * rows);
-  const sums = new Float64Array(draws);
+  const centre = withoutLast(predicted, circuits, d);
+  const sums: number[] = [];
   for (let from = 0; from < draws; from += 4) {
     const here = Math.min(4, draws - from);
     x.fill(0);
+    const kept: boolean[] = [];
     for (let l = 0; l < here; l++) {
       table.draw(generator, x, l, 4);
-      for (let c = 0; c < circuits; c++) for (let o = 0; o < d - 1; o++) x[4 * (c * (d - 1) + o) + l]! -= predicted[c * d + o]!;
+      const own = centreOf ? centreOf(from + l) : centre;
+      kept.push(own !== null);
+      for (let i = 0; i < rows; i++) x[4 * i + l]! -= own?.[i] ?? 0;
     }
     inverse.apply(x, y, 1);
     multiplyFour(design, y, 0, fitted, 0);
     for (let l = 0; l < here; l++) {
+      if (!kept[l]) continue;
       let sum = 0;
       for (let c = 0; c < circuits; c++) {
         let last = 0;
@@ -44,15 +52,16 @@ export function misfitOf(problem: PatchProblem, predicted: Float64Array, draws: 
         }
         sum += last * last;
       }
-      sums[from + l] = sum;
+      sums.push(sum);
     }
   }
   const { mean, deviation } = moments(sums);
+  const made = sums.length;
   let above = 0;
   for (const s of sums) if (s >= residualSum) above++;
   return {
     residualSum, expected: mean, sigmas: deviation > 0 ? (residualSum - mean) / deviation : 0,
-    pValue: Math.min(1, (2 * Math.min(above + 1, draws + 1 - above)) / (draws + 1)),
+    pValue: Math.min(1, (2 * Math.min(above + 1, made + 1 - above)) / (made + 1)),
   };
 }
 

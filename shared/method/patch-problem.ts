@@ -27,8 +27,8 @@ export interface PatchProblem {
   longest: number;
 }
 
-export function poseProblem(set: GateSet, circuits: readonly DatasetCircuit[], onProgress?: (p: EstimateProgress) => void): PatchProblem {
-  const layout = layoutOf(set);
+/** @param layout which parameters are estimated: all of the set unless told */
+export function poseProblem(set: GateSet, circuits: readonly DatasetCircuit[], onProgress?: (p: EstimateProgress) => void, layout: Layout = layoutOf(set)): PatchProblem {
   const indexed = indexCircuits(set, circuits);
   const counts = frequenciesOf(circuits, set.n);
   onProgress?.({ stage: 'design', fraction: 0 });

@@ -34,8 +34,12 @@ export function reportPatch(problem: PatchProblem, gateClass: GateClass | null, 
 /** Why nothing of a patch is determined, or null. */
 export function blockingReason(problem: PatchProblem, replicates: Replicates): string | null {
   if (problem.inverse.conditionRatio < TOO_WEAK_RATIO) return 'not determined: the circuits hold too little about these gates (smallest to largest singular value below 0.001)';
-  if (replicates.dropped > MOST_DROPPED * replicates.count) return `not determined: ${replicates.dropped} of ${replicates.count} replicates were not finite`;
-  return null;
+  return droppedReason(replicates.dropped, replicates.count);
+}
+
+/** More than one replicate in a hundred left out: nothing is determined. */
+export function droppedReason(dropped: number, count: number): string | null {
+  return dropped > MOST_DROPPED * count ? `not determined: ${dropped} of ${count} replicates were not finite` : null;
 }
 
 /** Whether the intervals of an incomplete set's predictions are withheld: its counts do not fit the first-order model. */
@@ -51,17 +55,35 @@ export function warningsOf(problem: PatchProblem, gateClass: GateClass | null, p
   if (!problem.complete) {
     out.push(`The counts determine ${inverse.rank} of the ${layout.columns - gauge.dimension} combinations that the gates allow: what is predicted holds to first order only, and some figures are not determined.`);
   }
+  out.push(...designWarnings(problem, gateClass), ...passWarnings(passes, replicates));
+  if (intervalsWithheld(problem, misfit)) out.push('The counts do not fit the first-order model: predictions and figures read from them stand without intervals.');
+  else out.push(...misfitWarnings(misfit));
+  return out;
+}
+
+/** A design that is too weak, or not sound enough for ranking. */
+export function designWarnings(problem: PatchProblem, gateClass: GateClass | null): string[] {
+  const { inverse } = problem;
+  const out: string[] = [];
   if (inverse.conditionRatio < TOO_WEAK_RATIO) out.push(`The circuits are too weak a design: smallest to largest singular value ${inverse.conditionRatio.toPrecision(2)}, below 0.001.`);
   else if (!isSound(problem, gateClass)) {
     out.push(inverse.conditionRatio < SOUND_RATIO
       ? `The design is not sound enough for ranking: smallest to largest singular value ${inverse.conditionRatio.toPrecision(2)}, below 0.01.`
       : 'The design is not sound enough for ranking: it does not have the rank of its gate class.');
   }
+  return out;
+}
+
+export function passWarnings(passes: Passes, replicates: Replicates): string[] {
+  const out: string[] = [];
   if (passes.stopped) out.push('The passes ran away and were stopped: figures, replicates and predictions are those of the single pass.');
   else if (!passes.settled) out.push('The passes have not settled: the last one still moved the predicted probabilities by a tenth of the shot noise or more.');
   if (replicates.dropped > 0) out.push(`${replicates.dropped} of ${replicates.count} replicates were not finite and are left out.`);
-  if (intervalsWithheld(problem, misfit)) out.push('The counts do not fit the first-order model: predictions and figures read from them stand without intervals.');
-  else if (misfit && misfit.sigmas > MISFIT_RANGE) out.push('The counts scatter more about the estimate than shot noise allows: drift, leakage or crosstalk may be present.');
-  else if (misfit && misfit.sigmas < -MISFIT_RANGE) out.push('The counts scatter less about the estimate than shot noise allows.');
   return out;
+}
+
+export function misfitWarnings(misfit: Misfit | null): string[] {
+  if (misfit && misfit.sigmas > MISFIT_RANGE) return ['The counts scatter more about the estimate than shot noise allows: drift, leakage or crosstalk may be present.'];
+  if (misfit && misfit.sigmas < -MISFIT_RANGE) return ['The counts scatter less about the estimate than shot noise allows.'];
+  return [];
 }

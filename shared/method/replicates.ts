@@ -1,4 +1,4 @@
-import { applyParameters, emptyMaps } from '#shared/method/parameters.ts';
+import { applyParameters, emptyMaps, type NoisyMaps } from '#shared/method/parameters.ts';
 import type { Passes } from '#shared/method/passes.ts';
 import type { PatchProblem } from '#shared/method/patch-problem.ts';
 import { MultinomialTable } from '#shared/random/multinomial.ts';
@@ -12,6 +12,9 @@ export interface Replicates {
   dropped: number;
 }
 
+/** Sets the maps of replicate b from its parameters: in a pair of a chained register they stand on its locals' replicate b. */
+export type FillMaps = (b: number, e: Float64Array, maps: NoisyMaps) => void;
+
 /** Groups of four replicates taken through the inverse together: large enough to reuse its rows, small enough for the cache. */
 const GROUPS = 16;
 
@@ -20,7 +23,7 @@ const GROUPS = 16;
  * e_b ← e_b + C⁺(f + f_b − s − p(e_b)). Where the passes were stopped the further pass is left out too.
  * Replicates are drawn one after another, so that fewer are a prefix of more.
  */
-export function drawReplicates(problem: PatchProblem, passes: Passes, count: number, generator: Xoshiro256, onProgress?: (done: number) => void): Replicates {
+export function drawReplicates(problem: PatchProblem, passes: Passes, count: number, generator: Xoshiro256, onProgress?: (done: number) => void, fill?: FillMaps): Replicates {
   const { set, layout, inverse, evaluator, observed, smoothed, counts } = problem;
   const { rows, columns } = inverse;
   const table = new MultinomialTable(counts.smoothed, counts.shots, counts.d);
@@ -45,7 +48,9 @@ export function drawReplicates(problem: PatchProblem, passes: Passes, count: num
     if (!passes.stopped) {
       for (let r = 0; r < here; r++) {
         const at = (r >> 2) * rows * 4 + (r & 3);
-        applyParameters(set, layout, parameters.subarray((from + r) * columns, (from + r + 1) * columns), maps);
+        const e = parameters.subarray((from + r) * columns, (from + r + 1) * columns);
+        if (fill) fill(from + r, e, maps);
+        else applyParameters(set, layout, e, maps);
         evaluator.run(maps, residual, at, 4);
         for (let i = 0; i < rows; i++) residual[at + 4 * i] = observed[i]! + drawn[at + 4 * i]! - residual[at + 4 * i]!;
       }

@@ -14,7 +14,7 @@ interface Case { name: string; replicates: number; load: () => IndependentFixtur
 const own = (name: string, replicates = 2000): Case => ({ name, replicates, load: () => independentFixture(name) });
 const cases: Case[] = [
   own('quarter-sealed'), own('clifford-unequal-shots'), own('odd-gates'), own('half-turns'), own('unsettled'), own('stopped'), own('too-weak'),
-  own('pair-reversed', 100), { name: 'dataset simulated by QuTiP', replicates: 2000, load: qutipFixture },
+  own('pair-reversed', 100), own('chained-two', 100), own('chained-three', 100), { name: 'dataset simulated by QuTiP', replicates: 2000, load: qutipFixture },
 ];
 
 const identity = ({ key, depth, gate, qubits }: Figure): string => [key, depth, gate, qubits.join(',')].join(' ');
