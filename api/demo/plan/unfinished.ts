@@ -22,5 +22,5 @@ export const unfinished: readonly Story[] = [
   story({ gateClass: cliffordT, device: 'Meadow-5', day: '2026-11-11', title: 'Clifford and T on q3, autumn', end: { kind: 'in-review', claimed: false } }),
   story({ gateClass: cliffordT, device: 'Ferry-3', day: '2026-11-16', title: 'Clifford and T on s3', end: { kind: 'in-review', claimed: false } }),
   story({ gateClass: quarterTurn, device: 'Tarn-1', day: '2026-11-18', title: 'Second ion, November', end: { kind: 'ready' } }),
-  story({ gateClass: quarterTurn, device: 'Copse-9', day: '2026-11-23', title: 'Qubit q4, second run', end: { kind: 'checking' } }),
+  story({ gateClass: quarterTurn, device: 'Copse-9', day: '2026-11-23', title: 'Qubit q4, held at checking to show that state', end: { kind: 'checking' } }),
 ];
