@@ -23,10 +23,11 @@ export function reportPatch(problem: PatchProblem, gateClass: GateClass | null, 
     qubits: [...qubits], columns: layout.columns, gaugeDimension: gauge.dimension, rank: inverse.rank, conditionRatio: inverse.conditionRatio,
     rankAmbiguous: inverse.rankAmbiguous, complete: problem.complete, sound: isSound(problem, gateClass), settled: passes.settled,
     spectrum: [...inverse.spectrum], misfit,
-    gateMaps: set.labels.map((gate, k) => {
+    gateMaps: set.labels.flatMap((gate, k) => {
+      if (layout.gateAt[k]! < 0) return [];
       const errorMap = new Array<number>(size).fill(0);
       for (let i = set.D; i < size; i++) errorMap[i] = passes.e[layout.gateAt[k]! + i - set.D]!;
-      return { gate, errorMap, smallestChoiEigenvalue: smallestChoiEigenvalue(maps.gates.subarray(k * size, (k + 1) * size), set.n) };
+      return [{ gate, errorMap, smallestChoiEigenvalue: smallestChoiEigenvalue(maps.gates.subarray(k * size, (k + 1) * size), set.n) }];
     }),
   };
 }
