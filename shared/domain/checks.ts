@@ -104,7 +104,8 @@ const driftCheck = (drift: readonly BlockMisfit[]): Check => {
 
 /** What the estimate adds to the list. None of these blocks: an entry may be public and say what it lacks. */
 export const checksOfEstimate = (result: ResultLook, drift: readonly BlockMisfit[]): Check[] => {
-  const loose = result.patches.filter((p) => !p.settled);
+  // A pair that could not be estimated has no misfit and no passes that could settle; the check of the design tells it.
+  const loose = result.patches.filter((p) => !p.settled && p.misfit !== null);
   const figures = result.figures.filter((f) => f.intervals !== null).length;
   return [
     designCheck(result.patches),

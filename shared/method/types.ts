@@ -20,7 +20,7 @@ export interface EstimateInput {
 export interface EstimateProgress {
   stage: 'design' | 'inverse' | 'passes' | 'replicates' | 'figures';
   fraction: number;
-  /** Replicates done so far, where that is the stage. */
+  /** Replicates done so far, where that is the stage; in a chained register the mean over its patches. */
   replicatesDone?: number;
 }
 

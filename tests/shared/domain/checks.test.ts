@@ -37,6 +37,8 @@ describe('checks of a file', () => {
 describe('checks of an estimate', () => {
   it('pass on a sound one and note what keeps another off the board, without blocking', () => {
     expect(status(checksOfEstimate(result, blocks([0.1, -1, 2])))).toEqual({ design: 'passed', settled: 'passed', bootstrap: 'passed', sealed: 'passed', misfit: 'passed', drift: 'passed' });
+    const unsound = { ...patch, qubits: [0, 1], rank: 199, complete: false, sound: false, settled: false, misfit: null };
+    expect(status(checksOfEstimate({ ...result, patches: [patch, unsound] }, [])), 'an unsound pair was not estimated: its design says so').toMatchObject({ design: 'note', settled: 'passed' });
     const poor = checksOfEstimate({ ...result, sealedCheck: { ...result.sealedCheck!, passed: false }, patches: [{ ...patch, sound: false, settled: false, misfit: { ...patch.misfit, sigmas: 12 } }] }, []);
     expect(status(poor)).toEqual({ design: 'note', settled: 'note', bootstrap: 'passed', sealed: 'note', misfit: 'note', drift: 'note' });
     expect(isBlocked(poor)).toBe(false);
