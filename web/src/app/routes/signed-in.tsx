@@ -22,9 +22,9 @@ export function SignedIn({ query, title, children }: Props) {
   return (
     <Wrap>
       <PageHead title={title} slim />
-      <Read query={query} what="Your sign-in" loading="Asking who you are" rows={1}>
+      <Read level={2} query={query} what="Your sign-in" loading="Asking who you are" rows={1}>
         {() => (
-          <ClosedDoor title="Sign in first" act={<a className="btn main-act" href={signInAddress(pathname + search)}>Sign in</a>}>
+          <ClosedDoor level={2} title="Sign in first" act={<a className="btn main-act" href={signInAddress(pathname + search)}>Sign in</a>}>
             This page belongs to the people who work with it. You come back here after signing in.
           </ClosedDoor>
         )}

@@ -14,7 +14,7 @@ function ContributorDoor() {
   return (
     <Wrap>
       <PageHead title="Desk" slim />
-      <ClosedDoor title="The desk is not open to you">
+      <ClosedDoor level={2} title="The desk is not open to you">
         It is for contributors of a provider or a laboratory. Ask a contributor of your organisation, or a steward of the registry, to add you.
       </ClosedDoor>
     </Wrap>

@@ -16,9 +16,9 @@ function NewRunSheet() {
   return (
     <Wrap>
       <PageHead slim above={<Link to="/desk/run-sheets">Run sheets</Link>} title="Plan a run sheet" />
-      <Read query={classes} what="The list of gate classes" loading="Loading the gate classes" rows={4}>
+      <Read level={2} query={classes} what="The list of gate classes" loading="Loading the gate classes" rows={4}>
         {(known) => (
-          <Read query={devices} what="The list of devices" loading="Loading your devices" rows={4}>
+          <Read level={2} query={devices} what="The list of devices" loading="Loading your devices" rows={4}>
             {(own) => <PlanForm key={organisation.id} devices={own.items} classes={known.items} addDevice={(done) => <AddDevice organisation={organisation.id} {...done} />} />}
           </Read>
         )}

@@ -20,7 +20,7 @@ export function Component() {
       ) : (
         <Wrap>
           <PageHead slim title="Review" />
-          <ClosedDoor title="The review queue is not open to you">It is for curators. You are signed in as {me.user?.name ?? 'someone'}, who is none.</ClosedDoor>
+          <ClosedDoor level={2} title="The review queue is not open to you">It is for curators. You are signed in as {me.user?.name ?? 'someone'}, who is none.</ClosedDoor>
         </Wrap>
       ))}
     </SignedIn>

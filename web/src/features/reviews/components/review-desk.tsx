@@ -26,7 +26,7 @@ export function ReviewDesk({ id }: { id: string | null }) {
   };
   return (
     <div className="wrap desk">
-      <Read query={queue} what="The review queue" loading="Loading the queue" rows={4}>
+      <Read level={2} query={queue} what="The review queue" loading="Loading the queue" rows={4}>
         {(data) => (
           <>
             <QueueList queue={data} current={id} now={now} />
@@ -45,10 +45,10 @@ function Start({ count, first, done }: { count: number; first: string | null; do
       {done ? <DoneMessage decided={done} /> : null}
       <div className="blk">
         {first ? (
-          <BlankState title={count === 1 ? 'One submission waits' : `${count} submissions wait`} act={<ButtonLink kind="first" to={`/review/${first}`}>Read the one that has waited longest</ButtonLink>}>
+          <BlankState level={2} title={count === 1 ? 'One submission waits' : `${count} submissions wait`} act={<ButtonLink kind="first" to={`/review/${first}`}>Read the one that has waited longest</ButtonLink>}>
             Each shows its checks, its figures and its thread. Claim a case before you decide on it.
           </BlankState>
-        ) : <EmptyState title="Nothing waits for you">New submissions appear here when a contributor sends them.</EmptyState>}
+        ) : <EmptyState level={2} title="Nothing waits for you">New submissions appear here when a contributor sends them.</EmptyState>}
       </div>
     </div>
   );
@@ -61,7 +61,7 @@ function OneCase({ id, done, onDecided }: { id: string; done: Decided | null; on
       <div className="case">
         <PageTitle>{`Review ${id}`}</PageTitle>
         <h1 className="unseen">Review {id}</h1>
-        <Read query={review} what="This case" loading={`Loading ${id}`} rows={6} missing={<BlankState title="There is no such case" act={<ButtonLink to="/review">Back to the queue</ButtonLink>}>Nothing in review has the number {id}. It may have been decided.</BlankState>}>{() => null}</Read>
+        <Read level={2} query={review} what="This case" loading={`Loading ${id}`} rows={6} missing={<BlankState level={2} title="There is no such case" act={<ButtonLink to="/review">Back to the queue</ButtonLink>}>Nothing in review has the number {id}. It may have been decided.</BlankState>}>{() => null}</Read>
       </div>
     );
   }

@@ -21,8 +21,8 @@ export function SheetPage({ id }: { id: string }) {
     return (
       <Wrap>
         <PageHead slim above={above} title={id} />
-        <Read query={sheet} what="This run sheet" loading={`Loading ${id}`} rows={5}
-          missing={<BlankState title="There is no such run sheet"><p>No run sheet has the number {id}, or it belongs to another organisation.</p></BlankState>}>
+        <Read level={2} query={sheet} what="This run sheet" loading={`Loading ${id}`} rows={5}
+          missing={<BlankState level={2} title="There is no such run sheet"><p>No run sheet has the number {id}, or it belongs to another organisation.</p></BlankState>}>
           {() => null}
         </Read>
       </Wrap>

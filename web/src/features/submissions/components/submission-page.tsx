@@ -28,8 +28,8 @@ export function SubmissionPage({ id }: { id: string }) {
   return (
     <Wrap>
       <PageHead slim above={above} title={id} />
-      <Read query={submission} what="This submission" loading={`Loading ${id}`} rows={6}
-        missing={<BlankState title="There is no such submission"><p>No submission has the number {id}.</p></BlankState>}>
+      <Read level={2} query={submission} what="This submission" loading={`Loading ${id}`} rows={6}
+        missing={<BlankState level={2} title="There is no such submission"><p>No submission has the number {id}.</p></BlankState>}>
         {() => null}
       </Read>
     </Wrap>
