@@ -3,6 +3,7 @@
  */
 import { expect, test } from 'vitest';
 import { gateClassById } from '#shared/domain/gate-classes.ts';
+import { all } from '#shared/formats/validators.js';
 import { estimate } from '#shared/method/estimate.ts';
 import type { Expected } from '#tests/shared/method/worked-example.ts';
 import { workedExample } from '#tests/shared/method/worked-example.ts';
@@ -20,6 +21,12 @@ test('every whole-register prediction and every gate loss of a pair agrees to 1e
     const found = result.figures.find((f) => f.key === 'gate-loss' && f.gate === gate);
     expect(Math.abs(found!.value! - loss), gate).toBeLessThan(1e-9);
   }
+});
+
+test('the result follows its schema', () => {
+  const valid = all.resultShell(JSON.parse(JSON.stringify(result)));
+  expect(all.resultShell.errors ?? []).toEqual([]);
+  expect(valid).toBe(true);
 });
 
 test('pairs are judged at the ideal local gates: rank and ratio agree to 1e-9, gauge dimension 0', () => {

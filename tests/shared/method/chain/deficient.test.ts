@@ -1,5 +1,7 @@
 import { describe, expect, test } from 'vitest';
+import { contentIdOf } from '#shared/formats/canonical-json.ts';
 import type { Figure } from '#shared/formats/types.ts';
+import { all } from '#shared/formats/validators.js';
 import { estimate } from '#shared/method/estimate.ts';
 import { judgeDesign } from '#shared/method/judge-design.ts';
 import { lineGates, makeRegister } from '#tests/shared/method/chain/made-register.ts';
@@ -23,7 +25,7 @@ describe('a register whose second pair has circuits of length 5 only', () => {
   const dataset = makeRegister('deficient', gates, [...patches, { qubits: [0, 1], count: 450, lengths: [4, 8, 12, 16] }, { qubits: [1, 2], count: 700, lengths: [5] }]);
   const ask = (id: string, qubits: number[], labels: string[]) => ({ id, qubits, gates: labels });
   const { result } = estimate({
-    dataset, contentId: 'deficient', gateClass: null, replicates: 20,
+    dataset, contentId: contentIdOf(dataset), gateClass: null, replicates: 20,
     predict: { format: 'evenbeam.circuits', formatVersion: '1.0.0', circuits: [ask('sound', [2, 1, 0], ['rx2', 'cz01', 'ry0']), ask('unsound', [0, 1, 2], ['rx1', 'cz12']), ask('alone', [2], ['rx2', 'ry2'])] },
   });
   const of = (key: string, gate: string): Figure => result.figures.find((f) => f.key === key && f.gate === gate)!;
@@ -33,6 +35,7 @@ describe('a register whose second pair has circuits of length 5 only', () => {
     const { rank } = judgeDesign({ gates, qubits: [1, 2], circuits: dataset.patches[4]!.circuits, pairOfChain: true });
     expect(rank).toBeLessThan(210);
     expect(pair).toMatchObject({ columns: 240, gaugeDimension: 0, rank, complete: false, sound: false, misfit: null, gateMaps: [] });
+    expect(all.resultShell(JSON.parse(JSON.stringify(result))), JSON.stringify(all.resultShell.errors)).toBe(true);
     expect(of('gate-loss', 'cz12')).toMatchObject({ value: null, determined: false, intervals: null });
     expect(of('gate-loss', 'cz12').reason).toMatch(/^unsound pair/);
     expect(result.warnings.some((w) => w.startsWith('Patch of q1 and q2:') && w.includes('unsound pair'))).toBe(true);
