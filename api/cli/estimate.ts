@@ -35,10 +35,13 @@ async function bytesOf(file: string): Promise<Uint8Array> {
   return bytes[0] === 0x1f && bytes[1] === 0x8b ? gunzipBounded(bytes) : bytes;
 }
 
+/** All replicates of all figures are held in memory: about a gigabyte for a pair at this number. */
+const mostReplicates = 50_000;
+
 function wholeNumber(text: string | undefined): number | undefined {
   if (text === undefined) return undefined;
   const n = Number(text);
-  if (!/^[0-9]+$/.test(text) || !Number.isSafeInteger(n) || n < 1) throw new Unusable([`: --replicates takes a whole number from 1 on, not ${JSON.stringify(text)}.`]);
+  if (!/^[0-9]+$/.test(text) || n < 1 || n > mostReplicates) throw new Unusable([`: --replicates takes a whole number from 1 to ${mostReplicates}, not ${JSON.stringify(text)}.`]);
   return n;
 }
 

@@ -14,7 +14,7 @@ export const readCursor = (text: string | undefined, length: number): string[] |
   } catch {
     throw unusable(text);
   }
-  if (!Array.isArray(values) || values.length !== length || !values.every((v) => typeof v === 'string')) throw unusable(text);
+  if (!Array.isArray(values) || values.length !== length || !values.every((v) => typeof v === 'string' && !v.includes('\u0000'))) throw unusable(text);
   return values as string[];
 };
 

@@ -1,4 +1,7 @@
-/** Rules that the database itself holds over the record, behind the services that hold them first. */
+/**
+ * Rules that the database itself holds over the record, behind the services that hold them first. Each function names
+ * its search path, temporary tables last: otherwise a role that may make temporary tables could put one in a table's place.
+ */
 
 /** A row trigger that also fires in replication mode. */
 const always = (name: string, table: string, events: string, run: string): string[] => [
@@ -8,7 +11,7 @@ const always = (name: string, table: string, events: string, run: string): strin
 
 export const recordRulesSql = [
   // No decision on one's own organisation, of now or of the last 12 months, and none without the office.
-  `create function refuse_interested_decision() returns trigger language plpgsql as $$
+  `create function refuse_interested_decision() returns trigger language plpgsql set search_path = pg_catalog, public, pg_temp as $$
 begin
   if exists (
     select 1 from membership m join submission s on s.organisation_id = m.organisation_id
@@ -25,7 +28,7 @@ end $$`,
   ...always('decision_without_interest', 'decision', 'before insert', 'refuse_interested_decision'),
 
   // Accessions are counted without gaps.
-  `create function step_by_one() returns trigger language plpgsql as $$
+  `create function step_by_one() returns trigger language plpgsql set search_path = pg_catalog, public, pg_temp as $$
 begin
   if new.last <> old.last + 1 then
     raise exception 'accessions are counted one by one' using errcode = 'EB003';
@@ -35,7 +38,7 @@ end $$`,
   ...always('accession_step', 'accession_counter', 'before update', 'step_by_one'),
 
   // A version follows from an accepting decision on its own submission, and versions are counted without gaps.
-  `create function check_entry_version() returns trigger language plpgsql as $$
+  `create function check_entry_version() returns trigger language plpgsql set search_path = pg_catalog, public, pg_temp as $$
 begin
   if not exists (select 1 from decision d where d.id = new.decision_id and d.submission_id = new.submission_id and d.outcome = 'accepted') then
     raise exception 'a version needs an accepting decision' using errcode = 'EB003';
@@ -48,7 +51,7 @@ end $$`,
   ...always('entry_version_sound', 'entry_version', 'before insert', 'check_entry_version'),
 
   // embargoed -> frozen -> superseded -> withdrawn, never back.
-  `create function check_entry_state() returns trigger language plpgsql as $$
+  `create function check_entry_state() returns trigger language plpgsql set search_path = pg_catalog, public, pg_temp as $$
 declare was text;
 begin
   select state into was from entry_state s where s.accession = new.accession and s.version = new.version order by id desc limit 1;

@@ -25,7 +25,7 @@ export const moves: Readonly<Record<Move, MoveRule>> = {
   check: { from: ['draft'], to: 'checking', by: 'registry' },
   block: { from: ['checking'], to: 'blocked', by: 'registry' },
   pass: { from: ['checking'], to: 'ready', by: 'registry' },
-  replace: { from: ['blocked', 'returned', 'ready'], to: 'draft', by: 'contributor' },
+  replace: { from: ['blocked', 'returned'], to: 'draft', by: 'contributor' },
   send: { from: ['ready'], to: 'in-review', by: 'contributor' },
   return: { from: ['in-review'], to: 'returned', by: 'curator' },
   decline: { from: ['in-review'], to: 'declined', by: 'curator' },

@@ -17,12 +17,16 @@ export interface Rule {
   standings: readonly Standing[];
   /** Open only in these states; absent = in all. */
   states?: readonly SubmissionState[];
+  /** The curator's standing counts only in these states; absent = in all. */
+  curatorStates?: readonly SubmissionState[];
   /** May an API token of the organisation stand in for a person? */
   token?: boolean;
 }
 
 const editable: readonly SubmissionState[] = ['draft', 'checking', 'blocked', 'ready', 'returned'];
 const underReview: readonly SubmissionState[] = ['in-review'];
+/** What was sent to a curator once; before that it is the contributor's own affair. */
+const sent: readonly SubmissionState[] = ['in-review', 'returned', 'declined', 'accepted', 'embargoed', 'frozen', 'superseded', 'withdrawn'];
 
 export const rules = {
   'public.read': { standings: ['anyone'], token: true },
@@ -42,12 +46,13 @@ export const rules = {
 
   'submission.list': { standings: ['contributor'], token: true },
   'submission.create': { standings: ['contributor'], token: true },
-  'submission.read': { standings: ['contributor', 'curator', 'steward'], token: true },
+  'submission.read': { standings: ['contributor', 'curator', 'steward'], curatorStates: sent, token: true },
   'submission.edit': { standings: ['contributor'], states: editable, token: true },
-  'submission.replace': { standings: ['contributor'], states: ['blocked', 'returned', 'ready'], token: true },
+  // Not from ready: whoever may try files against the sealed check can find out which circuits are sealed.
+  'submission.replace': { standings: ['contributor'], states: ['blocked', 'returned'], token: true },
   'submission.send': { standings: ['contributor'], states: ['ready'], token: true },
   'submission.cancel': { standings: ['contributor'], states: [...editable, 'in-review'], token: true },
-  'submission.write-message': { standings: ['contributor', 'curator'], states: [...editable, 'in-review', 'accepted', 'embargoed', 'frozen', 'superseded'], token: true },
+  'submission.write-message': { standings: ['contributor', 'curator'], states: [...editable, 'in-review', 'accepted', 'embargoed', 'frozen', 'superseded'], curatorStates: sent, token: true },
 
   'review.queue': { standings: ['curator'] },
   'review.read': { standings: ['curator'] },
@@ -88,12 +93,14 @@ export interface Thing {
 
 export type Verdict = { allowed: true } | { allowed: false; why: 'sign-in' | 'standing' | 'interest' | 'state' };
 
-const holds = (standing: Standing, asker: Asker, thing: Thing): boolean => {
+const isTied = (asker: Asker, thing: Thing): boolean => thing.owner !== null && asker.interestIn.includes(thing.owner);
+
+const holds = (standing: Standing, rule: Rule, asker: Asker, thing: Thing): boolean => {
   switch (standing) {
     case 'anyone': return true;
     case 'member': return asker.signedIn;
     case 'contributor': return thing.owner === null ? asker.contributorOf.length > 0 : asker.contributorOf.includes(thing.owner);
-    case 'curator': return asker.isCurator && (thing.owner === null || !asker.interestIn.includes(thing.owner));
+    case 'curator': return asker.isCurator && !isTied(asker, thing) && (rule.curatorStates === undefined || thing.state === undefined || rule.curatorStates.includes(thing.state));
     case 'steward': return asker.isSteward;
   }
 };
@@ -102,10 +109,9 @@ const holds = (standing: Standing, asker: Asker, thing: Thing): boolean => {
 export const judge = (action: Action, asker: Asker, thing: Thing = { owner: null }): Verdict => {
   const rule = ruleOf(action);
   if (asker.viaToken && !rule.token) return { allowed: false, why: 'standing' };
-  if (!rule.standings.some((s) => holds(s, asker, thing))) {
+  if (!rule.standings.some((s) => holds(s, rule, asker, thing))) {
     if (!asker.signedIn && !asker.viaToken) return { allowed: false, why: 'sign-in' };
-    const tied = rule.standings.includes('curator') && asker.isCurator && thing.owner !== null;
-    return { allowed: false, why: tied ? 'interest' : 'standing' };
+    return { allowed: false, why: rule.standings.includes('curator') && asker.isCurator && isTied(asker, thing) ? 'interest' : 'standing' };
   }
   if (rule.states && thing.state !== undefined && !rule.states.includes(thing.state)) return { allowed: false, why: 'state' };
   return { allowed: true };

@@ -34,7 +34,7 @@ export function openSeal(sheet: RunSheet, secret: Uint8Array): Seal {
 }
 
 /** Rules of a seal by itself: the secret fits the commitment, and in each patch the sealed circuits are the first by HMAC. */
-export function checkSealOnPatches(seal: Seal, patches: readonly { circuits: readonly { id: string }[] }[]): ErrorDetail[] {
+export function checkSealOnPatches(seal: Seal, patches: readonly { qubits: readonly number[]; circuits: readonly { id: string }[] }[]): ErrorDetail[] {
   const faults = new Faults();
   const secret = hexToBytes(seal.secret);
   if (commitmentOf(secret) !== seal.sealSha256) faults.add(['sealSha256'], `The SHA-256 of the secret is ${commitmentOf(secret)}, not ${seal.sealSha256}.`);
@@ -43,8 +43,9 @@ export function checkSealOnPatches(seal: Seal, patches: readonly { circuits: rea
   seal.sealed.forEach((id, i) => {
     if (!known.has(id)) faults.add(['sealed', i], `No circuit has the id ${shown(id)}.`);
   });
-  for (const { circuits } of patches) {
+  for (const { circuits, qubits } of patches) {
     const own = circuits.filter(({ id }) => listed.has(id));
+    if (qubits.length <= 2 && own.length > 0 && own.length === circuits.length) faults.add(['sealed'], `The seal keeps every circuit of the patch of qubits ${qubits.join(', ')}: none is left to estimate from.`);
     const chosen = new Set(sealedIds(secret, circuits, own.length));
     for (const { id } of own) {
       if (!chosen.has(id)) faults.add(['sealed', seal.sealed.indexOf(id)], `The circuit ${shown(id)} was not chosen by the secret: others of its patch have a smaller HMAC.`);

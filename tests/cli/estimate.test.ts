@@ -58,7 +58,8 @@ describe('npm run estimate', () => {
     ['a file that is not there', [join(folder, 'none.json')], /cannot be read \(ENOENT\)/],
     ['no file', [], /Name one dataset file/],
     ['an unknown option', [quarter, '--fast'], /'--fast'/],
-    ['replicates that are no whole number', [quarter, '--replicates', '1e3'], /--replicates takes a whole number from 1 on, not "1e3"/],
+    ['replicates that are no whole number', [quarter, '--replicates', '1e3'], /--replicates takes a whole number from 1 to 50000, not "1e3"/],
+    ['more replicates than can be held', [quarter, '--replicates', '99999999999'], /--replicates takes a whole number from 1 to 50000, not "99999999999"/],
     ['circuits that are a dataset', [quarter, '--predict', quarter], /quarter\.dataset\.json/],
     ['a place that cannot be written', [quarter, '--replicates', '2', '--out', join(folder, 'no', 'such', 'place.json')], /cannot be written/],
   ] as const)('exit 2: %s', (_, args, sentence) => {

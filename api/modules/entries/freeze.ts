@@ -67,6 +67,18 @@ const supersedeEarlier = async (work: Work, name: { accession: string; version: 
   }
 };
 
+/** A version whose embargo ended after a later version became public is superseded in the same moment. */
+const supersedeIfLate = async (work: Work, submission: Submission, name: { accession: string; version: number }): Promise<void> => {
+  const later = await work.em.find(EntryVersion, { accession: name.accession, version: { $gt: name.version } }, { fields: ['version', 'submissionId'], orderBy: { version: 'asc' } });
+  for (const { version, submissionId } of later) {
+    const { state } = await work.em.findOneOrFail(Submission, { id: submissionId });
+    if (state !== 'frozen' && state !== 'superseded') continue;
+    const reason = `superseded by ${versionedAccessionOf(name.accession, version)}`;
+    addState(work, name, 'superseded', reason);
+    return void (await supersede(work, submission, reason));
+  }
+};
+
 /**
  * Freezes an accepted submission: accession, version, bytes, result, replicates, seal and review, all in the caller's
  * transaction. With an embargo date ahead the version is kept but not public until then.
@@ -112,6 +124,7 @@ export const liftEmbargo = (work: Work, id: string): Promise<boolean> =>
     addState(tx, { accession, version }, 'frozen');
     await lift(tx, submission);
     await supersedeEarlier(tx, { accession, version });
+    await supersedeIfLate(tx, submission, { accession, version });
     recordAudit(tx.em, { at: tx.clock.now(), action: 'entry.lift', subjectType: 'entry', subjectId: versionedAccessionOf(accession, version), organisationId: submission.organisation.id });
     return true;
   });

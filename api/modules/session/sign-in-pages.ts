@@ -4,7 +4,7 @@ import type { Deps } from '#api/lib/deps.ts';
 import { newSecret } from '#api/lib/secrets.ts';
 import { callbackPath, googlePassport } from './google-strategy.ts';
 
-/** A path within the registry, or the desk: never another site. */
+/** A path within the registry, or its first page: never another site. */
 export const safeReturn = (wanted: unknown): string =>
   typeof wanted === 'string' && /^\/(?![/\\])[^\s\\]*$/.test(wanted) && wanted.length < 1000 && !wanted.startsWith('/auth/') ? wanted : '/';
 

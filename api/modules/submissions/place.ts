@@ -33,9 +33,16 @@ const refuseDuplicate = async (work: Work, organisation: string, contentId: stri
   throw new AppError('duplicate-content', `A dataset of the same content id (${contentId}) is in the registry already.`);
 };
 
-const refuseUsedSheet = async (work: Work, sheet: RunSheet, except: string | null): Promise<void> => {
-  const other = await work.em.findOne(Submission, { runSheet: sheet.id, correctionOf: null, state: { $in: liveStates }, ...(except ? { id: { $ne: except } } : {}) });
-  if (other) throw new AppError('already-exists', `${other.id} holds the dataset of run sheet ${sheet.id}. A sheet counts once: cancel that submission first, or draw a new sheet.`);
+/**
+ * A sheet counts once. It stays used when its submission was estimated and then given up, because by then its
+ * contributor has seen how the sealed circuits came out; only a correction of the sheet's own entry takes it again.
+ */
+const refuseUsedSheet = async (work: Work, sheet: RunSheet, correctionOf: string | null, except: string | null): Promise<void> => {
+  const used = await work.em.find(Submission, { runSheet: sheet.id, $or: [{ state: { $in: liveStates } }, { estimateId: { $ne: null } }], ...(except ? { id: { $ne: except } } : {}) });
+  const other = used.find((s) => correctionOf === null || (s.accession ?? s.correctionOf) !== correctionOf);
+  if (!other) return;
+  const way = isLive(other.state) && !other.estimateId ? 'cancel that submission first, or draw a new sheet' : 'draw a new sheet';
+  throw new AppError('already-exists', `${other.id} holds the dataset of run sheet ${sheet.id}. A sheet counts once: ${way}.`);
 };
 
 /** A correction goes to an entry of the same organisation, device, register and gate class. */
@@ -58,7 +65,7 @@ export const placeDataset = async (work: Work, file: { organisation: string; con
   const device = await findDevice(work, organisation, summary.device);
   const runSheet = summary.runSheet ? await work.em.findOne(RunSheet, { id: summary.runSheet.id, organisation, state: 'drawn' }) : null;
   if (correctionOf !== null) await refuseStrangeCorrection(work, organisation, correctionOf, summary, device);
-  else if (runSheet) await refuseUsedSheet(work, runSheet, except);
+  if (runSheet) await refuseUsedSheet(work, runSheet, correctionOf, except);
   return { device, runSheet };
 };
 

@@ -61,6 +61,12 @@ describe('what is frozen', () => {
     await expect(as(url, 'delete from accession_counter')).rejects.toMatchObject({ code: 'EB001' });
   });
 
+  it('is not fooled by a temporary table of a guarded name', async () => {
+    const { url } = app().database;
+    const wrong = `insert into entry_state (accession, version, state, at) select accession, version, 'embargoed', now() from entry_version limit 1`;
+    await expect(as(url, `create temporary table entry_state (id bigint, accession text, version int, state text); ${wrong.replace('into entry_state', 'into public.entry_state')}`)).rejects.toMatchObject({ code: 'EB003' });
+  });
+
   it('takes no state out of order and no version without an accepting decision', async () => {
     const { url } = app().database;
     await expect(as(url, `insert into entry_state (accession, version, state, at) select accession, version, 'embargoed', now() from entry_version limit 1`)).rejects.toMatchObject({ code: 'EB003' });
@@ -110,6 +116,17 @@ describe('an embargo', () => {
     expect(await liftEmbargoes(work)).toBe(0);
     expect((await reader('get', `/api/v1/entries/${accession}`)).body).toMatchObject({ state: 'frozen', frozenAt: '2026-05-20T00:07:00.000Z' });
     expect((await reader('get', `/api/v1/entries/${accession}/v/1/seal`)).status).toBe(200);
+    app().clock.set(testStart);
+  });
+
+  it('that ends after a correction became public leaves the older version superseded', async () => {
+    const { id, accession } = await accepted(app(), desk, makeDataset(desk, await makeDrawnSheet(app(), desk)), { embargoUntil: '2026-05-20' });
+    await accepted(app(), desk, makeDataset(desk, await makeDrawnSheet(app(), desk)), { correctionOf: accession });
+    app().clock.set(new Date('2026-05-20T00:07:00Z'));
+    expect(await liftEmbargoes(await workFor(app(), null))).toBe(1);
+    expect(await stateOf(app(), id)).toBe('superseded');
+    expect((await reader('get', `/api/v1/entries/${accession}`)).body).toMatchObject({ version: 2, state: 'frozen' });
+    expect((await reader('get', `/api/v1/entries/${accession}/v/1`)).body).toMatchObject({ version: 1, state: 'superseded' });
     app().clock.set(testStart);
   });
 

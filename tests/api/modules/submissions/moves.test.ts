@@ -39,7 +39,7 @@ const decision = (outcome: string) => ({ outcome, reason: 'For the test.', noInt
 /** A request and the states in which it is open; in every other it must be refused and change nothing. */
 const requests: [name: string, open: SubmissionState[], send: (id: string) => Promise<{ status: number; body: { code?: string } }>][] = [
   ['editing the record', ['checking', 'blocked', 'ready', 'returned'], async (id) => desk.client('patch', `/api/v1/submissions/${id}`).send({ notes: 'late' })],
-  ['a replacement', ['blocked', 'returned', 'ready'], async (id) => sendFile(desk.client, 'put', `/api/v1/submissions/${id}/dataset`, bytesOf(makeDataset(desk, null)))],
+  ['a replacement', ['blocked', 'returned'], async (id) => sendFile(desk.client, 'put', `/api/v1/submissions/${id}/dataset`, bytesOf(makeDataset(desk, null)))],
   ['sending to review', ['ready'], async (id) => desk.client('post', `/api/v1/submissions/${id}/submit`)],
   ['cancelling', ['checking', 'blocked', 'ready', 'in-review', 'returned'], async (id) => desk.client('post', `/api/v1/submissions/${id}/cancel`)],
   ['claiming', ['in-review'], async (id) => desk.curatorClient('post', `/api/v1/reviews/${id}/claim`)],

@@ -5,7 +5,7 @@ import { bytesOf, makeDataset, makeDesk, makeDrawnSheet, sendFile, workFor, type
 import { addMember, makeOrganisation, makeToken, makeUser } from '#tests/support/people.ts';
 import { asStranger, signInAs, withToken } from '#tests/support/sign-in.ts';
 import { useTestApp } from '#tests/support/test-app.ts';
-import { accepted, receive, stateOf } from '#tests/support/life.ts';
+import { accepted, estimated, receive, stateOf } from '#tests/support/life.ts';
 import { runEstimate } from '#api/modules/submissions/run-estimate.ts';
 import { cancelSubmission } from '#api/modules/submissions/service.ts';
 
@@ -69,6 +69,26 @@ describe('sending a dataset', () => {
     expect((await desk.client('get', `/api/v1/run-sheets/${sheet.id}`)).body).toMatchObject({ submission: id });
     await cancelSubmission(await workFor(app(), desk.contributor), id);
     expect((await sendFile(desk.client, 'post', address, bytesOf(makeDataset(desk, sheet)), { 'idempotency-key': 'sheet-2' })).status).toBe(202);
+  });
+
+  it('keeps a run sheet used once its sealed circuits were read, also by a correction of another entry', async () => {
+    const sheet = await makeDrawnSheet(app(), desk);
+    const id = await estimated(app(), desk, makeDataset(desk, sheet));
+    const refused = { status: 409, code: 'already-exists', detail: `${id} holds the dataset of run sheet ${sheet.id}. A sheet counts once: draw a new sheet.` };
+    await cancelSubmission(await workFor(app(), desk.contributor), id);
+    const again = (key: string, query = '') => sendFile(desk.client, 'post', `${address}${query}`, bytesOf(makeDataset(desk, sheet)), { 'idempotency-key': key });
+    expect((await again('read-1')).body).toMatchObject(refused);
+    const entry = await accepted(app(), desk, makeDataset(desk, await makeDrawnSheet(app(), desk)));
+    expect((await again('read-2', `?correctionOf=${entry.accession}`)).body).toMatchObject(refused);
+  });
+
+  it('refuses the character U+0000 in an address, a query, a cursor and a body, and names the place', async () => {
+    const nul = (place: string) => ({ status: 400, code: 'invalid-request', detail: expect.stringContaining(`${place}the character U+0000`) as string });
+    expect((await desk.client('get', '/api/v1/entries?q=a%00b')).body).toMatchObject(nul('In the query, q: '));
+    expect((await desk.client('get', '/api/v1/devices/%00')).body).toMatchObject(nul('In the address, id: '));
+    expect((await desk.client('get', `/api/v1/devices?cursor=${Buffer.from('["\\u0000"]').toString('base64url')}`)).body).toMatchObject({ status: 400, code: 'invalid-request' });
+    const id = await receive(app(), desk, makeDataset(desk, null));
+    expect((await desk.client('post', `${address}/${id}/messages`).send({ body: 'a\u0000b' })).body).toMatchObject({ ...nul('/body: '), errors: [{ pointer: '/body' }] });
   });
 
   it('keeps a file of several MiB, which goes to the database in pieces, byte for byte, also as a replacement', async () => {
