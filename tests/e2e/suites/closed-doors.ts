@@ -15,9 +15,7 @@ const broken = {
 
 export const closedDoors = (open: Open) => describe('what is not open', () => {
   it('a broken file is told by pointers, and nothing of it is sent', async () => {
-    const { page, signIn } = await open();
-    await page.goto('/');
-    await signIn('Ida Marsh');
+    const { page } = await open({ as: 'Ida Marsh' });
     await page.goto('/desk/submissions/new');
     const sent: string[] = [];
     page.on('request', (request) => {
@@ -35,9 +33,7 @@ export const closedDoors = (open: Open) => describe('what is not open', () => {
   });
 
   it('a file that breaks off is told in words', async () => {
-    const { page, signIn } = await open();
-    await page.goto('/');
-    await signIn('Ida Marsh');
+    const { page } = await open({ as: 'Ida Marsh' });
     await page.goto('/desk/submissions/new');
     await page.locator('input[type=file]').setInputFiles({ name: 'half.json', mimeType: 'application/json', buffer: Buffer.from(JSON.stringify(broken).slice(0, 400)) });
     await page.getByText('Nothing was sent. Mend what the table names and choose the file again.').waitFor();
@@ -45,9 +41,7 @@ export const closedDoors = (open: Open) => describe('what is not open', () => {
   });
 
   it('a curator with an interest sees that a case is kept from them, and neither reads nor decides it', async () => {
-    const other = await open();
-    await other.page.goto('/');
-    await other.signIn(curator);
+    const other = await open({ as: curator });
     await other.page.goto('/review');
     const queue = other.page.getByRole('complementary', { name: 'Review queue' });
     const row = queue.getByRole('link').filter({ hasText: laboratory });
@@ -55,9 +49,7 @@ export const closedDoors = (open: Open) => describe('what is not open', () => {
     const id = new URL((await row.getAttribute('href')) ?? '', other.page.url()).pathname.split('/').at(-1) ?? '';
     expect(id).toMatch(/^S-\d{6}$/);
 
-    const { page, signIn, context } = await open({ refusals: true });
-    await page.goto('/');
-    await signIn(tied);
+    const { page, context } = await open({ refusals: true, as: tied });
     await page.goto('/review');
     await page.getByText(/kept from you, because you belong, or belonged in the last 12 months, to/).waitFor();
     await page.getByText('Which', { exact: true }).click();
@@ -77,9 +69,7 @@ export const closedDoors = (open: Open) => describe('what is not open', () => {
   });
 
   it('the pages of a role are closed to those who do not hold it, and say so', async () => {
-    const { page, signIn } = await open();
-    await page.goto('/');
-    await signIn('Kit Wren');
+    const { page } = await open({ as: 'Kit Wren' });
     await page.goto('/desk/submissions');
     await page.getByRole('heading', { name: 'The desk is not open to you' }).waitFor();
     await page.goto('/review');
@@ -88,9 +78,7 @@ export const closedDoors = (open: Open) => describe('what is not open', () => {
   });
 
   it('a submission of another organisation is not shown, nor that it exists under which title', async () => {
-    const { page, signIn } = await open({ refusals: true });
-    await page.goto('/');
-    await signIn('Tom Ashdown');
+    const { page } = await open({ refusals: true, as: 'Tom Ashdown' });
     await page.goto('/desk/submissions/S-000001');
     await page.getByRole('heading', { name: 'This submission is not open to you' }).waitFor();
     expect(await page.locator('main').innerText()).not.toContain('First run on the left half');
@@ -106,9 +94,7 @@ export const closedDoors = (open: Open) => describe('what is not open', () => {
   });
 
   it('a tab left open when its session ended is told so, and nothing is lost', async () => {
-    const { page, signIn, context } = await open({ refusals: true });
-    await page.goto('/');
-    await signIn('Per Alder');
+    const { page, context } = await open({ refusals: true, as: 'Per Alder' });
     await page.goto('/desk/tokens');
     await page.getByLabel('What will use it').fill('Night run');
     await context.clearCookies();

@@ -5,7 +5,7 @@ import type { Open } from '../support/visitors.ts';
 
 interface Focus {
   name: string;
-  /** An outline or a border that differs from the element's neighbours: the eye sees where the focus is. */
+  /** An outline round the element or its label, or the heavier edge of a mark in a drawing: the eye sees where the focus is. */
   visible: boolean;
   inView: boolean;
 }
@@ -13,12 +13,13 @@ interface Focus {
 const focusOf = (page: Page): Promise<Focus> =>
   page.evaluate(() => {
     const element = document.activeElement ?? document.body;
-    const style = getComputedStyle(element);
+    const outlined = (of: Element | null): boolean => of !== null && getComputedStyle(of).outlineStyle !== 'none' && parseFloat(getComputedStyle(of).outlineWidth) > 0;
+    const mark = element.querySelector('.dot, .pt');
     const box = element.getBoundingClientRect();
     const label = element instanceof HTMLInputElement ? element.labels?.[0]?.textContent : null;
     return {
       name: (element.getAttribute('aria-label') ?? label ?? element.textContent ?? '').trim(),
-      visible: style.outlineStyle !== 'none' && parseFloat(style.outlineWidth) > 0,
+      visible: outlined(element) || outlined(element.closest('label')) || (mark !== null && parseFloat(getComputedStyle(mark).strokeWidth) >= 4),
       inView: box.bottom > 0 && box.top < innerHeight,
     };
   });
@@ -61,13 +62,16 @@ export const keyboard = (open: Open) => describe('with the keyboard alone', () =
     await tabTo(page, /^Quarter turns on one qubit/, 2);
   });
 
-  it('points of a drawing are reached and read out', async () => {
+  it('the points of a drawing are one stop; arrows go from point to point and each is read out', async () => {
     const { page } = await open();
     await page.goto('/entries/EVB-000001');
     await settled(page);
-    const point = page.locator('main svg [tabindex="0"], main [role="slider"], main [role="img"][tabindex="0"]').first();
-    await point.focus();
-    expect((await focusOf(page)).visible).toBe(true);
+    await tabTo(page, /^Depth 0: /);
+    await page.keyboard.press('ArrowRight');
+    const { name } = await focusOf(page);
+    expect(name).toMatch(/^Depth 1: 0\.\d+, 95\s% interval 0\.\d+ to \d\.\d+/);
+    await page.keyboard.press('End');
+    expect((await focusOf(page)).name).toMatch(/^Depth 64/);
   });
 
   it('a contributor signs in, opens a new submission and chooses a file', async () => {

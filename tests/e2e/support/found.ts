@@ -1,7 +1,8 @@
 import type { APIRequestContext, Browser, BrowserContextOptions } from 'playwright-core';
 import { inventedPeople } from '#api/fakes/people.ts';
 import type { SubmissionState } from '#shared/domain/life-cycle.ts';
-import { openVisitor, type Places } from './visitor.ts';
+import { signInQuietly } from './quick-sign-in.ts';
+import type { Places } from './visitor.ts';
 
 type StorageState = BrowserContextOptions['storageState'];
 
@@ -28,16 +29,6 @@ export const contributors = inventedPeople.filter(({ membership }) => membership
 export const curator = 'Ruth Holloway';
 export const onlooker = 'Kit Wren';
 
-/** Signs a person in through the chooser once; their cookies serve every later context. */
-const sessionOf = async (browser: Browser, places: Places, person: string): Promise<StorageState> => {
-  const { context, page, signIn } = await openVisitor(browser, places);
-  await page.goto('/');
-  await signIn(person);
-  const state = await context.storageState();
-  await context.close();
-  return state;
-};
-
 const read = async <T>(request: APIRequestContext, path: string): Promise<T> => {
   const answer = await request.get(path);
   if (!answer.ok()) throw new Error(`${path} answered ${answer.status()}: ${(await answer.text()).slice(0, 300)}`);
@@ -56,9 +47,9 @@ const ownThings = async (request: APIRequestContext): Promise<{ submissions: Lis
 export const findAll = async (browser: Browser, places: Places): Promise<Found> => {
   const found: Found = { sessions: new Map(), entry: '', superseded: '', device: '', submissions: new Map(), sheet: { id: '', person: '' }, cases: [] };
   for (const person of [...contributors, curator, onlooker]) {
-    const storageState = await sessionOf(browser, places, person);
-    found.sessions.set(person, storageState);
-    const context = await browser.newContext({ baseURL: places.url, storageState });
+    const context = await browser.newContext({ baseURL: places.url });
+    await signInQuietly(context, person);
+    found.sessions.set(person, await context.storageState());
     const own = await ownThings(context.request);
     for (const { id, state } of own.submissions) if (!found.submissions.has(state)) found.submissions.set(state, { id, person });
     if (own.sheets[0] && found.sheet.id === '') found.sheet = { id: own.sheets[0].id, person };

@@ -1,4 +1,5 @@
 import type { Browser, BrowserContext, BrowserContextOptions, Page } from 'playwright-core';
+import { signInQuietly } from './quick-sign-in.ts';
 
 export interface Visitor {
   context: BrowserContext;
@@ -17,6 +18,8 @@ export interface Places {
 export interface VisitorOptions extends BrowserContextOptions {
   /** The test asks for something that is refused. */
   refusals?: boolean;
+  /** Name of the person who is signed in from the start. */
+  as?: string;
 }
 
 /** A refused request is answered by the page; the browser's own line about it is expected where a test asks for a refusal. */
@@ -24,9 +27,10 @@ const aboutRefusal = /the server responded with a status of (?:401|403|404|409|4
 
 /** Someone with a browser of their own: no cookies, nothing remembered. */
 export const openVisitor = async (browser: Browser, { url, signIn }: Places, options: VisitorOptions = {}): Promise<Visitor> => {
-  const { refusals = false, ...more } = options;
+  const { refusals = false, as, ...more } = options;
   const context = await browser.newContext({ baseURL: url, viewport: { width: 1440, height: 900 }, acceptDownloads: true, reducedMotion: 'reduce', ...more });
   context.setDefaultTimeout(45_000);
+  if (as !== undefined) await signInQuietly(context, as);
   const page = await context.newPage();
   const faults: string[] = [];
   page.on('console', (message) => {
