@@ -18,7 +18,7 @@ export const unfinished: readonly Story[] = [
   story({ gateClass: quarterTurn, device: 'Lantern-2', day: '2026-11-02', title: 'Mode 3, first run', flaw: 'unknown-device', end: { kind: 'blocked' } }),
   story({ gateClass: quarterTurn, device: 'Plumbline-1', day: '2026-11-03', title: 'Reference device, new noise', end: { kind: 'in-review', claimed: false } }),
   story({ gateClass: quarterTurn, device: 'Marl-4', day: '2026-11-05', title: 'Atom a1, November', end: { kind: 'in-review', claimed: false } }),
-  story({ gateClass: cliffordT, device: 'Quill-7', day: '2026-11-09', title: 'Clifford and T on q11, second run', end: { kind: 'in-review', claimed: true }, exchange: 11 }),
+  story({ gateClass: cliffordT, device: 'Quill-7', day: '2026-11-17', title: 'Clifford and T on q11, second run', end: { kind: 'in-review', claimed: true }, exchange: 11 }),
   story({ gateClass: cliffordT, device: 'Meadow-5', day: '2026-11-11', title: 'Clifford and T on q3, autumn', end: { kind: 'in-review', claimed: false } }),
   story({ gateClass: cliffordT, device: 'Ferry-3', day: '2026-11-16', title: 'Clifford and T on s3', end: { kind: 'in-review', claimed: false } }),
   story({ gateClass: quarterTurn, device: 'Tarn-1', day: '2026-11-18', title: 'Second ion, November', end: { kind: 'ready' } }),
