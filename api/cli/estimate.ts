@@ -1,6 +1,7 @@
-import { readFileSync, renameSync, rmSync, writeFileSync } from 'node:fs';
+import { readFileSync } from 'node:fs';
 import { parseArgs } from 'node:util';
 import { gunzipBounded } from '#api/lib/gunzip-bounded.ts';
+import { writeWhole } from '#api/lib/write-whole.ts';
 import { AppError, type ErrorDetail } from '#shared/errors/app-error.ts';
 import { readCircuits } from '#shared/formats/read-circuits.ts';
 import { readDataset } from '#shared/formats/read-dataset.ts';
@@ -61,14 +62,10 @@ function showProgress({ stage, fraction }: EstimateProgress): void {
   if (process.stderr.isTTY) process.stderr.write(`\r${stage.padEnd(10)} ${String(Math.round(100 * fraction)).padStart(3)} %`);
 }
 
-/** A result is whole or not there: written beside its place, then moved into it. */
-function writeWhole(file: string, text: string): void {
-  const draft = `${file}.${process.pid}.part`;
+function writeResult(file: string, text: string): void {
   try {
-    writeFileSync(draft, text);
-    renameSync(draft, file);
+    writeWhole(file, text);
   } catch (error) {
-    rmSync(draft, { force: true });
     throw new Unusable([`: The result cannot be written to ${file} (${(error as NodeJS.ErrnoException).code ?? 'unknown reason'}).`]);
   }
 }
@@ -89,7 +86,7 @@ async function main(): Promise<void> {
   });
   const text = `${JSON.stringify(result)}\n`;
   if (asked.out === undefined) process.stdout.write(text);
-  else writeWhole(asked.out, text);
+  else writeResult(asked.out, text);
   process.stderr.write(`${process.stderr.isTTY ? '\r' : ''}${((performance.now() - started) / 1000).toFixed(1)} seconds\n`);
 }
 

@@ -59,10 +59,21 @@ const drawScatter = (generator: Xoshiro256, { shots, probabilities }: Row): numb
 const shotNoise = ({ shots, probabilities }: Row): number => probabilities.reduce((sum, p) => sum + (p * (1 - p)) / shots, 0);
 
 /**
+ * Normal score of a sum of squares x whose reference has mean m and standard deviation s: the cube root of a chi-square
+ * variable is nearly normal (Wilson–Hilferty transformation; Proc. Natl. Acad. Sci. 17, 684, 1931; from memory), here with
+ * ν = 2m²/s² degrees of freedom: z = ((x/m)^(1/3) − 1 + 2/(9ν)) / √(2/(9ν)). A plain (x − m)/s has skewness about 0.6 for
+ * thirty circuits and passed the 1 % bound of eight blocks on 6 of 150 honest datasets. m, s > 0, x ≥ 0.
+ */
+export const normalScore = (x: number, m: number, s: number): number => {
+  const spread = s ** 2 / (9 * m ** 2);
+  return (Math.cbrt(x / m) - 1 + spread) / Math.sqrt(spread);
+};
+
+/**
  * Drift between blocks. For block β, S_β = Σ (f − p̂)² over its unsealed circuits and all outcomes; reference: f_b drawn
  * from p̂ (clipped, renormalised), S_β,b = Σ_patches ρ · Σ (f_b − p̂)². ρ is the share of the scatter that the fit leaves in
  * the patch, expected misfit / Σ p(1 − p)/N: the estimate has followed a part 1 − ρ of the noise of every circuit, and
- * random circuits share that part evenly between blocks. sigmas = (S_β − mean S_β,b) / sd S_β,b.
+ * random circuits share that part evenly between blocks. sigmas: the normal score of S_β in that reference (see below).
  * `predictions`: of every circuit of the dataset, at the estimate. Circuits without a block are left out; blocks ascending.
  * Cost: draws × circuits binomials.
  */
@@ -83,6 +94,6 @@ export const driftOf = (dataset: Dataset, contentId: string, sealed: ReadonlySet
     for (let b = 0; b < draws; b += 1) sums[b] = own.reduce((sum, row) => sum + (shares[row.patch] ?? 1) * drawScatter(generator, row), 0);
     const { mean, deviation } = moments(sums);
     const scatter = own.reduce((sum, row) => sum + row.scatter, 0);
-    return { block, sigmas: deviation > 0 ? (scatter - mean) / deviation : 0, circuits: own.length };
+    return { block, sigmas: deviation > 0 ? normalScore(scatter, mean, deviation) : 0, circuits: own.length };
   });
 };

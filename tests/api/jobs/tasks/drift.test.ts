@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { driftOf } from '#api/jobs/tasks/drift.ts';
+import { driftOf, normalScore } from '#api/jobs/tasks/drift.ts';
 import { gateClassById } from '#shared/domain/gate-classes.ts';
 import { contentIdOf } from '#shared/formats/canonical-json.ts';
 import type { Dataset, PlainCircuit } from '#shared/formats/types.ts';
@@ -31,6 +31,8 @@ describe('drift between blocks', () => {
     // sd of the mean 1/√160 = 0.079; sd of the spread about 0.06 for scores with the skew of a sum of some 30 squares.
     expect(Math.abs(mean)).toBeLessThan(0.24);
     expect(Math.abs(deviation - 1)).toBeLessThan(0.2);
+    // A standardised sum of squares would have skewness 0.6; the standard error of 160 normal values is √(6/160) = 0.19.
+    expect(Math.abs(scores.reduce((sum, z) => sum + ((z - mean) / deviation) ** 3, 0) / scores.length)).toBeLessThan(0.5);
   });
 
   it('singles out the block in which the readout moved', () => {
@@ -53,5 +55,12 @@ describe('drift between blocks', () => {
     expect(driftIn(dataset)).toEqual(driftIn(dataset));
     for (const c of dataset.patches[0]!.circuits) delete c.block;
     expect(driftIn(dataset)).toEqual([]);
+  });
+});
+
+describe('the normal score of a sum of squares', () => {
+  // Quantiles of chi-square with 30 degrees of freedom at 1, 50 and 99 %: 14.953, 29.336, 50.892 (printed tables; from memory).
+  it.each([[14.953, -2.326], [29.336, 0], [50.892, 2.326]])('of %d from chi-square with 30 degrees of freedom is %d', (x, z) => {
+    expect(Math.abs(normalScore(x, 30, Math.sqrt(60)) - z)).toBeLessThan(0.01);
   });
 });
