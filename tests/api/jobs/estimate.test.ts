@@ -1,4 +1,5 @@
 import { spawn } from 'node:child_process';
+import pg from 'pg';
 import { afterEach, describe, expect, it, vi } from 'vitest';
 import { Submission } from '#api/entities/submission.ts';
 import { estimateJob } from '#api/jobs/estimate.ts';
@@ -33,14 +34,34 @@ const startProcess = (): ReturnType<typeof spawn> =>
     },
   });
 
+const held = 4711;
+
+/**
+ * Makes every write to a submission that follows its first counted replicates wait, so that a fast machine cannot finish before
+ * it is killed. The returned function ends the connections that wait, as the dead process would, and lets others write again.
+ */
+const holdAfterFirstReplicates = async (): Promise<() => Promise<void>> => {
+  const owner = new pg.Client({ connectionString: app().database.ownerUrl });
+  await owner.connect();
+  await owner.query('select pg_advisory_lock($1)', [held]);
+  await owner.query(`create function hold_write() returns trigger language plpgsql as $$ begin perform pg_advisory_xact_lock_shared(${held}); return new; end $$`);
+  await owner.query('create trigger hold_write before update on submission for each row when (old.replicates_done > 0) execute function hold_write()');
+  return async () => {
+    await app().deps.pool.query("select pg_terminate_backend(pid) from pg_stat_activity where datname = current_database() and wait_event_type = 'Lock' and wait_event = 'advisory'");
+    await owner.query('drop trigger hold_write on submission');
+    await owner.end();
+  };
+};
+
 describe('the estimate job', () => {
   it('killed with -9 in the middle is taken up by another worker and gives, to the byte, what the method gives', async () => {
     const desk = await makeDesk(app());
     const sheet = await makeDrawnSheet(app(), desk);
     const dataset = makeDataset(desk, sheet);
-    const replicates = 4000;
+    const replicates = 12_000;
     const id = await receive(app(), desk, dataset, { replicates });
 
+    const letWrite = await holdAfterFirstReplicates();
     const process = startProcess();
     await vi.waitFor(async () => expect((await row(id)).replicatesDone).toBeGreaterThan(0), soon);
     process.kill('SIGKILL');
@@ -50,6 +71,7 @@ describe('the estimate job', () => {
     expect(halfway.progress).toBeGreaterThan(0);
     expect(halfway.progress).toBeLessThan(1);
     expect(halfway.checks.length).toBeGreaterThan(0);
+    await letWrite();
 
     worker = await startWorker(app().deps, [estimateJob], { recoverEveryMs: 100, pollSeconds: 0.5 });
     await vi.waitFor(async () => expect((await row(id)).state).toBe('ready'), soon);
