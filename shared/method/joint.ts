@@ -1,4 +1,4 @@
-import { DEFAULT_REPLICATES, METHOD, MISFIT_DRAWS } from '#shared/method/constants.ts';
+import { DEFAULT_REPLICATES, MISFIT_DRAWS } from '#shared/method/constants.ts';
 import { determinedCircuits } from '#shared/method/determined.ts';
 import { planBenchFigures } from '#shared/method/bench-plans.ts';
 import { planFigure, writeFigure, type FigurePlan, type FigureValues } from '#shared/method/figure-plan.ts';
@@ -15,11 +15,12 @@ import { idealProbabilities, probabilitiesOf, Reader, ReadingCircuits } from '#s
 import { drawReplicates, type Replicates } from '#shared/method/replicates.ts';
 import { SealedReference } from '#shared/method/sealed-check.ts';
 import type { EstimateInput, EstimateOutput, ReplicateTable } from '#shared/method/types.ts';
+import type { MethodVersion } from '#shared/method/versions.ts';
 import { openStream } from '#shared/random/streams.ts';
 import { meanTotalVariation } from '#shared/stats/distance.ts';
 
 /** The estimate of a joint dataset: exactly one patch of one or two qubits, every gate with a full error map. */
-export function estimateJoint(input: EstimateInput): EstimateOutput {
+export function estimateJoint(input: EstimateInput, method: MethodVersion): EstimateOutput {
   const { dataset, contentId, gateClass, onProgress } = input;
   const patch = dataset.patches[0]!;
   const sealedIds = new Set(input.seal?.sealed ?? []);
@@ -27,15 +28,15 @@ export function estimateJoint(input: EstimateInput): EstimateOutput {
   const problem = poseProblem(set, patch.circuits.filter((c) => !sealedIds.has(c.id)), onProgress);
   const sealedCircuits = patch.circuits.filter((c) => sealedIds.has(c.id));
   onProgress?.({ stage: 'passes', fraction: 0 });
-  const passes = runPasses(problem);
+  const passes = runPasses(problem, problem.observed, method.passes);
   const count = input.replicates ?? DEFAULT_REPLICATES;
-  const replicates = drawReplicates(problem, passes, count, openStream(contentId, METHOD, 'replicates'), (done) =>
+  const replicates = drawReplicates(problem, passes, count, openStream(contentId, method.id, 'replicates'), (done) =>
     onProgress?.({ stage: 'replicates', fraction: done / count, replicatesDone: done }));
 
   const maps = emptyMaps(set);
   applyParameters(set, problem.layout, passes.e, maps);
   const draws = set.n === 1 ? MISFIT_DRAWS.one : MISFIT_DRAWS.pair;
-  const misfit = misfitOf(problem, probabilitiesOf(set, problem.circuits, maps), draws, openStream(contentId, METHOD, 'misfit'));
+  const misfit = misfitOf(problem, probabilitiesOf(set, problem.circuits, maps), draws, openStream(contentId, method.id, 'misfit'));
   const blocked = blockingReason(problem, replicates);
   const withheld = intervalsWithheld(problem, misfit);
 
@@ -45,13 +46,13 @@ export function estimateJoint(input: EstimateInput): EstimateOutput {
   const sealed = planSealed(problem, patch.qubits, indexCircuits(set, sealedCircuits), frequenciesOf(sealedCircuits, set.n), circuits);
   const plans = [...bench.retained, ...bench.output, gate.error, ...gate.loss, ...gate.angle, bench.readout, sealed.plan].map((p) => (blocked === null || p.reason === 'no bench circuits' ? p : { ...p, reason: blocked }));
 
-  const reference = sealed.plan.reason === null && blocked === null ? sealed.reference(passes, openStream(contentId, METHOD, 'sealed')) : null;
+  const reference = sealed.plan.reason === null && blocked === null ? sealed.reference(passes, openStream(contentId, method.id, 'sealed')) : null;
   const read = readFigures(problem, passes, replicates, plans, circuits.circuits, (p) => reference?.add(p, sealed.from), (fraction) => onProgress?.({ stage: 'figures', fraction }));
   const figures = plans.map((plan, i) => writeFigure(plan, read.values[i]!, withheld && plan.firstOrderOnly));
   const predictions = input.predict ? predict(problem, passes, replicates, input.predict.circuits, { reason: blocked, withheld }) : [];
   const error = figures[figures.length - 1]!.value;
   const result: EstimateOutput['result'] = {
-    format: 'evenbeam.result', formatVersion: '1.0.0', method: METHOD, datasetSha256: contentId, replicates: count, sealed: sealedCircuits.length,
+    format: 'evenbeam.result', formatVersion: '1.0.0', method: method.id, datasetSha256: contentId, replicates: count, sealed: sealedCircuits.length,
     patches: [reportPatch(problem, gateClass, patch.qubits, passes, misfit)], figures,
     sealedCheck: reference && error !== null ? reference.check(error, sealed.idealError()) : null,
     predictions, warnings: warningsOf(problem, gateClass, passes, replicates, misfit),

@@ -3,7 +3,7 @@ import { applyParameters, emptyMaps } from '#shared/method/parameters.ts';
 import type { PatchProblem } from '#shared/method/patch-problem.ts';
 
 export interface Passes {
-  /** The estimate: of eight passes, or of one where the passes were stopped. */
+  /** The estimate: of all passes, or of one where the passes were stopped. */
   e: Float64Array;
   /** The first-order estimate. */
   first: Float64Array;
@@ -13,10 +13,11 @@ export interface Passes {
 }
 
 /**
- * e⁰ = C⁺(f − p(0)), then seven times e ← e + C⁺(f − p(e)), p(e) the full product of noisy maps, C⁺ never recomputed.
+ * e⁰ = C⁺(f − p(0)), then in each further pass e ← e + C⁺(f − p(e)), p(e) the full product of noisy maps, C⁺ never recomputed.
  * @param frequencies the design's rows; those observed unless told
+ * @param count passes in all, as the method version says; at least one
  */
-export function runPasses(problem: PatchProblem, frequencies: Float64Array = problem.observed): Passes {
+export function runPasses(problem: PatchProblem, frequencies: Float64Array = problem.observed, count: number = PASSES): Passes {
   const { set, layout, inverse, evaluator } = problem;
   const { rows, columns } = inverse;
   const maps = emptyMaps(set);
@@ -26,7 +27,7 @@ export function runPasses(problem: PatchProblem, frequencies: Float64Array = pro
   const residual = new Float64Array(4 * rows);
   const step = new Float64Array(4 * columns);
   let first = e;
-  for (let pass = 0; pass < PASSES; pass++) {
+  for (let pass = 0; pass < count; pass++) {
     applyParameters(set, layout, e, maps);
     evaluator.run(maps, p);
     for (let i = 0; i < rows; i++) residual[4 * i] = frequencies[i]! - p[i]!;

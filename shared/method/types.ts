@@ -7,6 +7,8 @@ export interface EstimateInput {
   contentId: string;
   /** The class with its bench circuits; null for `custom` or an unknown class. */
   gateClass: GateClass | null;
+  /** Method version; the official one unless told. */
+  method?: string;
   /** Opened seal: those circuits are kept out of the estimate. Null: every circuit is used. */
   seal?: Seal | null;
   /** Circuits whose outcomes are to be predicted. */

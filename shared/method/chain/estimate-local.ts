@@ -1,6 +1,6 @@
 import type { DatasetPatch, GateDeclaration, Misfit } from '#shared/formats/types.ts';
 import { tabulate, type MapTable } from '#shared/method/chain/map-table.ts';
-import { METHOD, MISFIT_DRAWS } from '#shared/method/constants.ts';
+import { MISFIT_DRAWS } from '#shared/method/constants.ts';
 import { idealGateSet } from '#shared/method/gate-set.ts';
 import { misfitOf } from '#shared/method/misfit.ts';
 import { applyParameters, emptyMaps } from '#shared/method/parameters.ts';
@@ -9,6 +9,7 @@ import { blockingReason } from '#shared/method/patch-report.ts';
 import { poseProblem, type PatchProblem } from '#shared/method/patch-problem.ts';
 import { probabilitiesOf } from '#shared/method/readings.ts';
 import { drawReplicates, type Replicates } from '#shared/method/replicates.ts';
+import type { MethodVersion } from '#shared/method/versions.ts';
 import { openStream } from '#shared/random/streams.ts';
 
 /** One patch of a chained register, estimated. */
@@ -30,6 +31,7 @@ export interface LocalEstimate {
 export interface ChainContext {
   gates: readonly GateDeclaration[];
   contentId: string;
+  method: MethodVersion;
   sealed: ReadonlySet<string>;
   /** Replicates that figures are read from. */
   count: number;
@@ -45,15 +47,15 @@ export function firstReplicates(all: Replicates, count: number): Replicates {
 
 /** A one-qubit patch of a chained register: estimated jointly, by itself. */
 export function estimateLocal(context: ChainContext, source: DatasetPatch, patch: number): LocalEstimate {
-  const { gates, contentId, sealed, count, onProgress } = context;
+  const { gates, contentId, method, sealed, count, onProgress } = context;
   const set = idealGateSet(gates, source.qubits);
   const problem = poseProblem(set, source.circuits.filter((c) => !sealed.has(c.id)));
-  const passes = runPasses(problem);
+  const passes = runPasses(problem, problem.observed, method.passes);
   const drawn = Math.max(count, MISFIT_DRAWS.pair);
-  const replicates = drawReplicates(problem, passes, drawn, openStream(contentId, METHOD, 'replicates', patch), (done) => onProgress?.(done / drawn));
+  const replicates = drawReplicates(problem, passes, drawn, openStream(contentId, method.id, 'replicates', patch), (done) => onProgress?.(done / drawn));
   const maps = emptyMaps(set);
   applyParameters(set, problem.layout, passes.e, maps);
-  const misfit = misfitOf(problem, probabilitiesOf(set, problem.circuits, maps), MISFIT_DRAWS.one, openStream(contentId, METHOD, 'misfit', patch));
+  const misfit = misfitOf(problem, probabilitiesOf(set, problem.circuits, maps), MISFIT_DRAWS.one, openStream(contentId, method.id, 'misfit', patch));
   return {
     qubit: source.qubits[0]!, patch, problem, passes, replicates, misfit,
     blocked: blockingReason(problem, firstReplicates(replicates, count)), table: tabulate(set, problem.layout, passes, replicates),

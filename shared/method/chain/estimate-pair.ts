@@ -3,7 +3,7 @@ import { SOUND_RATIO } from '#shared/linalg/tolerances.ts';
 import { firstReplicates, type ChainContext, type LocalEstimate } from '#shared/method/chain/estimate-local.ts';
 import { LocalBase, type LocalGate } from '#shared/method/chain/local-base.ts';
 import { ESTIMATE, REPLICATES, tabulate, type MapTable } from '#shared/method/chain/map-table.ts';
-import { METHOD, MISFIT_DRAWS } from '#shared/method/constants.ts';
+import { MISFIT_DRAWS } from '#shared/method/constants.ts';
 import { designMatrix } from '#shared/method/design.ts';
 import { idealGateSet, indexCircuits, type GateSet } from '#shared/method/gate-set.ts';
 import { invertDesign, type Inverse } from '#shared/method/inverse.ts';
@@ -92,10 +92,10 @@ export function estimatePair(context: ChainContext, source: DatasetPatch, patch:
 }
 
 function fitPair(context: ChainContext, problem: PatchProblem, base: LocalBase, patch: number): PairFit {
-  const { contentId, count, onProgress } = context;
+  const { contentId, method, count, onProgress } = context;
   const { set, layout } = problem;
-  const passes = runPasses(problem);
-  const replicates = drawReplicates(problem, passes, count, openStream(contentId, METHOD, 'replicates', patch), (done) => onProgress?.(done / count), (b, e, maps) => {
+  const passes = runPasses(problem, problem.observed, method.passes);
+  const replicates = drawReplicates(problem, passes, count, openStream(contentId, method.id, 'replicates', patch), (done) => onProgress?.(done / count), (b, e, maps) => {
     applyParameters(set, layout, e, maps);
     base.write(REPLICATES + b, maps);
   });
@@ -103,7 +103,7 @@ function fitPair(context: ChainContext, problem: PatchProblem, base: LocalBase, 
   applyParameters(set, layout, passes.e, maps);
   const centre = new Float64Array(problem.inverse.rows);
   const predicted = probabilitiesOf(set, problem.circuits, maps);
-  const misfit = misfitOf(problem, predicted, MISFIT_DRAWS.pair, openStream(contentId, METHOD, 'misfit', patch), (b) => {
+  const misfit = misfitOf(problem, predicted, MISFIT_DRAWS.pair, openStream(contentId, method.id, 'misfit', patch), (b) => {
     base.write(REPLICATES + b, maps);
     problem.evaluator.run(maps, centre);
     return Number.isFinite(centre[0]!) ? centre : null;

@@ -4,11 +4,11 @@ import { readRows, type ReadFigure } from '#shared/method/chain/read-rows.ts';
 import type { RegisterMaps } from '#shared/method/chain/register-maps.ts';
 import { planRegisterFigures, planRegisterSealed, RegisterReadings } from '#shared/method/chain/register-plans.ts';
 import { replicatesRead } from '#shared/method/chain/register-predictions.ts';
-import { METHOD } from '#shared/method/constants.ts';
 import { droppedReason } from '#shared/method/patch-report.ts';
 import type { ReadingContext } from '#shared/method/readings.ts';
 import { SealedReference } from '#shared/method/sealed-check.ts';
 import type { EstimateInput } from '#shared/method/types.ts';
+import type { MethodVersion } from '#shared/method/versions.ts';
 import { openStream } from '#shared/random/streams.ts';
 import { meanTotalVariation } from '#shared/stats/distance.ts';
 
@@ -23,7 +23,7 @@ export interface RegisterFigures {
 const NOTHING = new Float64Array(0);
 
 /** Figures of the whole register: bench circuits, readout loss, and what the sealed circuits say. */
-export function readRegisterFigures({ dataset, contentId, gateClass, onProgress }: EstimateInput, maps: RegisterMaps, sealedIds: ReadonlySet<string>, longest: number, count: number): RegisterFigures {
+export function readRegisterFigures({ dataset, contentId, gateClass, onProgress }: EstimateInput, method: MethodVersion, maps: RegisterMaps, sealedIds: ReadonlySet<string>, longest: number, count: number): RegisterFigures {
   const qubits = dataset.register.length;
   const readings = new RegisterReadings(maps, qubits);
   const { retained, output, readout } = planRegisterFigures(maps, dataset, gateClass, longest, readings);
@@ -35,7 +35,7 @@ export function readRegisterFigures({ dataset, contentId, gateClass, onProgress 
     readings.read(row, probabilities);
     return probabilities.every((p) => Number.isFinite(p)) ? context : null;
   };
-  const reference = sealed.plan.reason === null ? referenceAt(readings, sealed.from, sealed.counts, contentId) : null;
+  const reference = sealed.plan.reason === null ? referenceAt(readings, sealed.from, sealed.counts, openStream(contentId, method.id, 'sealed')) : null;
   const read = replicatesRead(qubits, count);
   const plans = [...retained, ...output, readout, sealed.plan];
   const found = readRows(plans, count, read, contextOf, (b) => {
@@ -50,10 +50,10 @@ export function readRegisterFigures({ dataset, contentId, gateClass, onProgress 
   };
 }
 
-function referenceAt(readings: RegisterReadings, from: number, counts: ConstructorParameters<typeof SealedReference>[1], contentId: string): SealedReference {
+function referenceAt(readings: RegisterReadings, from: number, counts: ConstructorParameters<typeof SealedReference>[1], generator: ReturnType<typeof openStream>): SealedReference {
   const estimate = new Float64Array((readings.circuits.length - from) * readings.d);
   readings.read(ESTIMATE, estimate, from);
-  return new SealedReference(estimate, counts, openStream(contentId, METHOD, 'sealed'));
+  return new SealedReference(estimate, counts, generator);
 }
 
 /** More than one replicate in a hundred left out of those read: the figure is not determined. */
