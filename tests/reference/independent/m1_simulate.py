@@ -10,13 +10,20 @@ def expm_hermitian(h):
 
 
 class Device:
-    """Every gate is its ideal unitary, a random small unitary, Pauli flips and damping on its targets; SPAM errors per qubit."""
+    """Every gate is its ideal unitary, a random small unitary, Pauli flips and damping on its targets; SPAM errors per qubit.
+
+    coherent, stochastic: one strength for all gates, or a list [of one-qubit gates, of two-qubit gates].
+    The coherent part alone has entanglement infidelity sin(coherent)^2, the flips alone about `stochastic`.
+    """
 
     def __init__(self, dataset, rng, coherent, stochastic, readout=(0.01, 0.02), preparation=0.005):
         self.rng, self.n = rng, len(dataset['register'])
         self.kraus = {}
+        strength = lambda x, k: x[k - 1] if isinstance(x, list) else x
+        coherent_of, stochastic_of = coherent, stochastic
         for g in dataset['gates']:
             k = len(g['targets'])
+            coherent, stochastic = strength(coherent_of, k), strength(stochastic_of, k)
             basis = [a for a in PAULI] if k == 1 else [np.kron(a, b) for a in PAULI for b in PAULI]
             x = rng.normal(size=len(basis) - 1)
             h = sum(c * p for c, p in zip(x / np.linalg.norm(x), basis[1:])) * coherent

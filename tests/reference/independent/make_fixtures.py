@@ -1,7 +1,9 @@
 """Makes the fixtures of this folder: python3 make_fixtures.py [NAME ...]
 
-Each NAME.json holds a simulated dataset, its seal, circuits to predict and the estimate of the independent reading.
+Each NAME.json (or NAME.json.gz) holds a simulated dataset, its seal, circuits to predict and the estimate of the
+independent reading; those with `truth` also the exact probabilities of the circuits to predict on the simulated device.
 """
+import gzip
 import hashlib
 import json
 import os
@@ -34,8 +36,8 @@ def odd_unitary():
     return [[[float(c.real), float(c.imag)] for c in row] for row in u]
 
 
-def build(name, seed, class_id, gates, register, patches, shots, noise, B, sealed=0.2, gate_class=None):
-    """patches: (qubits, circuits, lengths, labels, prefix)."""
+def build(name, seed, class_id, gates, register, patches, shots, noise, B, sealed=0.2, gate_class=None, asked=None, large=False):
+    """patches: (qubits, circuits, lengths, labels, prefix). asked: lengths of whole-register circuits to predict, with truth."""
     rng = np.random.default_rng(seed)
     dataset = {'format': 'evenbeam.dataset', 'formatVersion': '1.0.0', 'title': f'Fixture {name}', 'gateClass': class_id,
                'device': {'provider': 'Reference simulation', 'name': 'numpy', 'modality': 'simulated'},
@@ -54,22 +56,25 @@ def build(name, seed, class_id, gates, register, patches, shots, noise, B, seale
     secret = rng.bytes(32)
     seal = {'format': 'evenbeam.seal', 'formatVersion': '1.0.0', 'runSheet': 'RS-000001', 'secret': secret.hex(),
             'sealSha256': hashlib.sha256(secret).hexdigest(), 'sealed': hidden} if hidden else None
-    joint = len(patches) == 1
-    asked = []
-    for i, length in enumerate([0, 1, 2, 4, 6, 8, 10, 12, 16, 16, 24, 32]):
-        qubits = patches[0][0] if joint else [int(q) for q in rng.permutation(len(register))[:rng.integers(1, len(register) + 1)]]
+    joint, circuits = len(patches) == 1, []
+    for i, length in enumerate(asked or [0, 1, 2, 4, 6, 8, 10, 12, 16, 16, 24, 32]):
+        some = lambda: [int(q) for q in rng.permutation(len(register))[:rng.integers(1, len(register) + 1)]]
+        qubits = patches[0][0] if joint else list(range(len(register))) if asked else some()
         known = [g['label'] for g in gates if all(t in qubits for t in g['targets'])]
-        asked.append({'id': f't{i}', 'qubits': qubits, 'gates': [known[k] for k in rng.integers(len(known), size=length)]})
-    predict = {'format': 'evenbeam.circuits', 'formatVersion': '1.0.0', 'circuits': asked}
+        circuits.append({'id': f't{i}', 'qubits': qubits, 'gates': [known[k] for k in rng.integers(len(known), size=length)]})
+    predict = {'format': 'evenbeam.circuits', 'formatVersion': '1.0.0', 'circuits': circuits}
     expected = estimate(dataset, gate_class, seal, predict, B=B, seed=seed)
     for p in expected['patches']:
         if p['columns'] > 100:
             p['spectrum'] = [p['spectrum'][0], p['spectrum'][p['rank'] - 1]] if joint else []
             p['gateMaps'] = [{k: v for k, v in m.items() if k != 'errorMap'} for m in p['gateMaps']]
     header = {'script': f'make_fixtures.py {name}', 'python': sys.version.split()[0], 'numpy': np.__version__, 'scipy': scipy.__version__, 'seed': seed}
-    with open(os.path.join(HERE, f'{name}.json'), 'w') as f:
-        json.dump({'header': header, 'dataset': dataset, 'seal': seal, 'circuits': predict, 'expected': expected}, f)
-        f.write('\n')
+    fixture = {'header': header, 'dataset': dataset, 'seal': seal, 'circuits': predict, 'expected': expected}
+    if asked:
+        fixture['truth'] = [device.on(c['qubits'])(c['gates']).tolist() for c in circuits]
+    text = (json.dumps(fixture) + '\n').encode()
+    with open(os.path.join(HERE, f'{name}.json' + ('.gz' if large else '')), 'wb') as f:
+        f.write(gzip.compress(text, 9, mtime=0) if large else text)
     lost = sorted({x['key'] for x in expected['figures'] if x['value'] is None})
     print(name, [(p['rank'], p['columns'], f"{p['conditionRatio']:.2g}", p['settled'], f"{p['misfit']['sigmas']:.1f}") for p in expected['patches']],
           'null:', lost, 'sealed', expected['sealedCheck'] and expected['sealedCheck']['passed'], flush=True)
@@ -157,6 +162,28 @@ def chained_two():
 @job
 def chained_three():
     chained('chained-three', 109, 3, [[0, 1], [2, 1]], 400)
+
+
+@job
+def large_pair():
+    """1,600 circuits to estimate from and 400 sealed: what a run sheet of a pair asks for."""
+    cls, gates = shipped('quarter-turn-cz-2q/1')
+    build('large-pair', 20261201, cls['id'], gates, ['q4', 'q7'], [([0, 1], 2000, PAIRS, [g['label'] for g in gates], 'c')], [1000], MILD, 200,
+          gate_class=cls, large=True)
+
+
+@job
+def line_of_three():
+    """400 circuits a qubit, 1,000 a pair, 1,500 shots; local gates lose 0.1 %, cz 0.6 %, half of it coherent."""
+    cls, gates = shipped('chained-cz-3q/1')
+    of = lambda qs, ids: [g['label'] for g in gates if all(t in qs for t in g['targets']) and (ids or not g['label'].startswith('id'))]
+    patches = [([q], 400, ONE, of([q], True), f'q{q}-') for q in range(3)]
+    patches += [([a, a + 1], 1000, PAIRS, of([a, a + 1], False), f'p{a}-') for a in range(2)]
+    patches.append(([0, 1, 2], 40, PAIRS, of(range(3), True), 'w-'))
+    # Damping of half the strength adds a quarter to what the flips of a local gate lose.
+    noise = dict(coherent=[0.0005 ** 0.5, 0.003 ** 0.5], stochastic=[0.0004, 0.003], readout=(0.004, 0.008), preparation=0.002)
+    build('line-of-three', 20261202, cls['id'], gates, ['q1', 'q2', 'q3'], patches, [1500], noise, 200, sealed=0, gate_class=cls,
+          asked=[length for length in (6, 9, 12, 15, 18, 21, 24) for _ in range(20)], large=True)
 
 
 for name in sys.argv[1:] or JOBS:
