@@ -52,6 +52,6 @@ export class SparseProduct {
     }
     let g = 0;
     for (; g + WIDE <= groups; g += WIDE) kernels.sparse4(at.start, at.index, at.value, rows, at.x + g * columns * 32, at.y + g * rows * 32, columns * 32, rows * 32);
-    for (; g < groups; g++) kernels.sparse1(at.start, at.index, at.value, rows, at.x + g * columns * 32, at.y + g * rows * 32, 0, 0);
+    for (; g < groups; g++) kernels.sparse1(at.start, at.index, at.value, rows, at.x + g * columns * 32, at.y + g * rows * 32);
   }
 }

@@ -14,7 +14,7 @@ let compiled: WebAssembly.Module | null | undefined;
 function compile(): WebAssembly.Module | null {
   if (compiled !== undefined) return compiled;
   try {
-    compiled = new WebAssembly.Module(kernelBytes() as Uint8Array<ArrayBuffer>);
+    compiled = new WebAssembly.Module(kernelBytes());
   } catch {
     compiled = null;
   }
@@ -27,6 +27,6 @@ export function openArena(bytes: number, plain = false): Arena {
   if (!module) return { buffer: new ArrayBuffer(bytes), kernels: null };
   const pages = Math.max(1, Math.ceil(bytes / PAGE));
   const memory = new WebAssembly.Memory({ initial: pages, maximum: pages });
-  const instance = new WebAssembly.Instance(module, { m: { m: memory } });
+  const instance = new WebAssembly.Instance(module, { env: { memory } });
   return { buffer: memory.buffer, kernels: instance.exports as unknown as Kernels };
 }

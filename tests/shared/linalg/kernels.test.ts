@@ -1,11 +1,13 @@
 /** The WebAssembly kernels and plain TypeScript must give the same bits: a result may not depend on where it was computed. */
 import { describe, expect, test } from 'vitest';
+import { compileKernels } from '#api/lib/kernel-source.ts';
 import { Cholesky } from '#shared/linalg/cholesky.ts';
 import { ColumnStore } from '#shared/linalg/column-store.ts';
 import { PanelStore } from '#shared/linalg/panel-store.ts';
 import { SparseBuilder } from '#shared/linalg/sparse.ts';
 import { SparseProduct } from '#shared/linalg/sparse-product.ts';
 import { openArena } from '#shared/linalg/wasm/arena.ts';
+import { kernelBase64 } from '#shared/linalg/wasm/kernel-bytes.ts';
 import { kernelBytes } from '#shared/linalg/wasm/kernels.ts';
 import { Evaluator } from '#shared/method/evaluator.ts';
 import { idealGateSet, indexCircuits } from '#shared/method/gate-set.ts';
@@ -22,6 +24,10 @@ test('this engine takes the module, and it is small enough to be compiled at onc
   expect(kernelBytes().length).toBeLessThan(4096);
   expect(openArena(8).kernels).not.toBeNull();
   expect(openArena(8, true).kernels).toBeNull();
+});
+
+test('the committed bytes are those of the sources: `npm run kernels` after a change', async () => {
+  expect(Buffer.from(await compileKernels()).toString('base64')).toBe(kernelBase64);
 });
 
 test.each([[7, 5], [16, 40], [43, 311]])('panels of a %i×%i matrix', (m, n) => {
