@@ -87,6 +87,7 @@ const start = async (): Promise<KeptChild[]> => {
     DATABASE_URL: database.url,
     DATABASE_OWNER_URL: undefined,
     SESSION_SECRET: settings.SESSION_SECRET ?? secrets.session,
+    LOG_SIGNING_KEY: settings.LOG_SIGNING_KEY ?? secrets.log,
     GOOGLE_CLIENT_ID: credentials.clientId,
     GOOGLE_CLIENT_SECRET: credentials.clientSecret,
     ...(standIn ? { GOOGLE_AUTHORIZATION_URL: standIn.authorizationUrl, GOOGLE_TOKEN_URL: standIn.tokenUrl, GOOGLE_USERINFO_URL: standIn.userinfoUrl } : {}),

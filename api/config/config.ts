@@ -22,6 +22,8 @@ export interface Config {
   ownerUrl: string;
   databasePool: number;
   sessionSecret: string;
+  /** Ed25519 private key of the log: PKCS #8, base64. */
+  logSigningKey: string;
   google: GoogleConfig;
   smtpUrl: string;
   mailFrom: string;
@@ -58,6 +60,7 @@ export const configFrom = (source: Record<string, string | undefined>): Config =
     ownerUrl: env.DATABASE_OWNER_URL ?? env.DATABASE_URL,
     databasePool: env.DATABASE_POOL,
     sessionSecret: env.SESSION_SECRET,
+    logSigningKey: env.LOG_SIGNING_KEY,
     google: {
       clientId: env.GOOGLE_CLIENT_ID,
       clientSecret: env.GOOGLE_CLIENT_SECRET,

@@ -15,6 +15,7 @@ export const environmentSchema = z.object({
   DATABASE_OWNER_URL: z.string().startsWith('postgres').optional(),
   DATABASE_POOL: z.coerce.number().int().min(2).max(100).default(10),
   SESSION_SECRET: z.string().min(32, 'must have at least 32 characters'),
+  LOG_SIGNING_KEY: z.string().min(1),
   GOOGLE_CLIENT_ID: z.string().min(1),
   GOOGLE_CLIENT_SECRET: z.string().min(1),
   GOOGLE_AUTHORIZATION_URL: address.default('https://accounts.google.com/o/oauth2/v2/auth'),
@@ -41,6 +42,7 @@ export const launcherSchema = environmentSchema
   .extend({
     DATABASE_URL: environmentSchema.shape.DATABASE_URL.optional(),
     SESSION_SECRET: environmentSchema.shape.SESSION_SECRET.optional(),
+    LOG_SIGNING_KEY: environmentSchema.shape.LOG_SIGNING_KEY.optional(),
     GOOGLE_CLIENT_ID: z.string().optional(),
     GOOGLE_CLIENT_SECRET: z.string().optional(),
     SMTP_URL: environmentSchema.shape.SMTP_URL.optional(),
@@ -60,7 +62,7 @@ export const parseEnvironment = <T extends z.ZodType>(schema: T, source: Record<
   const lines = parsed.error.issues.map((issue) => {
     const name = issue.path.join('.');
     const given = source[name];
-    const secret = /SECRET|DATABASE|SMTP/.test(name);
+    const secret = /SECRET|DATABASE|SMTP|KEY/.test(name);
     return given === undefined || given === '' ? `${name} is not set.` : `${name}${secret ? '' : ` = ${JSON.stringify(given)}`}: ${issue.message}.`;
   });
   throw new Error(`The settings cannot be used:\n  ${lines.join('\n  ')}`);

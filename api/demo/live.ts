@@ -62,7 +62,7 @@ export const liveThrough = async (deps: OwnedDeps, acts: readonly Act[], orders:
       current = act;
       const own = em.fork();
       try {
-        await act.run({ em: own, clock: new SettableClock(act.at), queue, runInThread, records, outcomes });
+        await act.run({ em: own, clock: new SettableClock(act.at), queue, runInThread, logKey: deps.logKey, records, outcomes });
         await own.flush();
       } catch (fault) {
         throw new Error(`The demo stopped at "${act.name}", ${act.at.toISOString()}: ${fault instanceof Error ? fault.message : String(fault)}`, { cause: fault });

@@ -1,5 +1,6 @@
 import { RunSheet } from '#api/entities/run-sheet.ts';
 import { drawRunSheet, giveUpRunSheet } from '#api/modules/run-sheets/draw.ts';
+import { registryWork } from '#api/lib/work-of.ts';
 import { defineJob } from './define-job.ts';
 import { latestWrite } from './latest-write.ts';
 
@@ -15,7 +16,7 @@ export const drawSheetJob = defineJob({
       (fault) => deps.log.warn({ err: fault, runSheet: id }, 'progress was not written'),
     );
     try {
-      await drawRunSheet({ em, clock: deps.clock, queue: deps.queue, runInThread, caller: null }, id, {
+      await drawRunSheet(registryWork(em, deps, runInThread), id, {
         signal,
         onProgress: (report) => {
           progress(report.stage, report.fraction);
@@ -26,5 +27,5 @@ export const drawSheetJob = defineJob({
       await row.settle();
     }
   },
-  exhausted: async ({ data, em, deps }) => giveUpRunSheet({ em, clock: deps.clock, queue: deps.queue, runInThread: deps.threads.run, caller: null }, data.runSheet, 'The registry could not draw the sheet. The fault is ours and is noted; ask for it again.'),
+  exhausted: async ({ data, em, deps }) => giveUpRunSheet(registryWork(em, deps), data.runSheet, 'The registry could not draw the sheet. The fault is ours and is noted; ask for it again.'),
 });

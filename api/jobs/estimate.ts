@@ -1,5 +1,6 @@
 import { Submission } from '#api/entities/submission.ts';
 import { giveUpEstimate, runEstimate } from '#api/modules/submissions/run-estimate.ts';
+import { registryWork } from '#api/lib/work-of.ts';
 import { defineJob } from './define-job.ts';
 import { latestWrite } from './latest-write.ts';
 import type { EstimateReport } from './tasks/estimate-dataset.ts';
@@ -17,7 +18,7 @@ export const estimateJob = defineJob({
       (fault) => deps.log.warn({ err: fault, submission: id }, 'progress was not written'),
     );
     try {
-      await runEstimate({ em, clock: deps.clock, queue: deps.queue, runInThread, caller: null }, id, round, {
+      await runEstimate(registryWork(em, deps, runInThread), id, round, {
         signal,
         onProgress: (report) => {
           progress(report.stage, report.fraction);
@@ -28,5 +29,5 @@ export const estimateJob = defineJob({
       await row.settle();
     }
   },
-  exhausted: async ({ data, em, deps }) => giveUpEstimate({ em, clock: deps.clock, queue: deps.queue, runInThread: deps.threads.run, caller: null }, data.submission, data.round),
+  exhausted: async ({ data, em, deps }) => giveUpEstimate(registryWork(em, deps), data.submission, data.round),
 });

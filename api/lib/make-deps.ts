@@ -7,6 +7,7 @@ import { startThreads } from '#api/jobs/threads.ts';
 import { ormOptions } from '#api/mikro-orm.config.ts';
 import { systemClock, type Clock } from './clock.ts';
 import type { Deps } from './deps.ts';
+import { readLogKey } from './log-key.ts';
 
 export interface OwnedDeps extends Deps {
   /** Closes what was opened here, in the reverse order. */
@@ -23,6 +24,7 @@ export const makeDeps = async (config: Config, more: { clock?: Clock; log?: Logg
   const threads = startThreads({ threads: config.workerThreads, file: config.threadFile });
   return {
     config, orm, pool, queue, threads, log,
+    logKey: readLogKey(config.logSigningKey),
     clock: more.clock ?? systemClock,
     close: async () => {
       await threads.stop();

@@ -1,4 +1,5 @@
 import type { Scope } from './define-route.ts';
+import type { Deps } from './deps.ts';
 import type { Work } from './work.ts';
 
 /** The unit of work of a request. */
@@ -7,6 +8,17 @@ export const workOf = ({ em, deps, caller, requestId }: Pick<Scope, 'em' | 'deps
   clock: deps.clock,
   queue: deps.queue,
   runInThread: deps.threads.run,
+  logKey: deps.logKey,
   caller,
   requestId,
+});
+
+/** The registry's own work: in a job, or while it looks after itself. */
+export const registryWork = (em: Work['em'], deps: Pick<Deps, 'clock' | 'queue' | 'logKey' | 'threads'>, runInThread: Work['runInThread'] = deps.threads.run): Work => ({
+  em,
+  clock: deps.clock,
+  queue: deps.queue,
+  runInThread,
+  logKey: deps.logKey,
+  caller: null,
 });

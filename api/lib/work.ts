@@ -3,6 +3,7 @@ import type { Queue } from '#api/jobs/queue.ts';
 import type { RunInThread } from '#api/jobs/threads.ts';
 import type { Caller } from './caller.ts';
 import type { Clock } from './clock.ts';
+import type { LogKey } from './log-key.ts';
 
 /**
  * What a service is given: a unit of work, the time, and who asks. Routes, jobs and the demo registry make one each.
@@ -13,6 +14,8 @@ export interface Work {
   clock: Clock;
   queue: Queue;
   runInThread: RunInThread;
+  /** Signs what is written to the log. */
+  logKey: LogKey;
   caller: Caller | null;
   requestId?: string | null;
 }

@@ -6,9 +6,11 @@ import { createApp } from '#api/app.ts';
 import { configFrom, type Config } from '#api/config/config.ts';
 import { startQueue } from '#api/jobs/queue.ts';
 import { SettableClock } from '#api/lib/clock.ts';
+import { readLogKey } from '#api/lib/log-key.ts';
 import { startThreads } from '#api/jobs/threads.ts';
 import type { Deps } from '#api/lib/deps.ts';
 import type { Route } from '#api/lib/define-route.ts';
+import { testLogKey } from './log-key.ts';
 import { createTestDatabase, dropTestDatabase, type TestDatabase } from './test-database.ts';
 
 export interface TestApp {
@@ -23,6 +25,7 @@ export const testConfig = (databaseUrl: string, more: Record<string, string> = {
     NODE_ENV: 'test',
     DATABASE_URL: databaseUrl,
     SESSION_SECRET: 'a secret for tests only, long enough',
+    LOG_SIGNING_KEY: testLogKey,
     GOOGLE_CLIENT_ID: 'evenbeam-local',
     GOOGLE_CLIENT_SECRET: 'local-only',
     GOOGLE_AUTHORIZATION_URL: 'http://127.0.0.1:9/authorize',
@@ -59,7 +62,7 @@ export const useTestApp = (options: TestAppOptions = {}): (() => TestApp) => {
     pool = new pg.Pool({ connectionString: database.url, max: 2 });
     const clock = new SettableClock(testStart);
     const queue = await startQueue(database.url, () => undefined);
-    const deps: Deps = { config, orm: database.orm, pool, queue, threads: startThreads({ threads: 1 }), clock, log: testLog(options.faultsExpected ?? false) };
+    const deps: Deps = { config, orm: database.orm, pool, queue, threads: startThreads({ threads: 1 }), clock, logKey: readLogKey(testLogKey), log: testLog(options.faultsExpected ?? false) };
     made = { app: createApp(deps, options.routes), deps, clock, database };
   });
   afterAll(async () => {

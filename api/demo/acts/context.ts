@@ -3,6 +3,7 @@ import { Organisation } from '#api/entities/organisation.ts';
 import { User } from '#api/entities/user.ts';
 import { authorise } from '#api/lib/authorise.ts';
 import type { Clock } from '#api/lib/clock.ts';
+import type { LogKey } from '#api/lib/log-key.ts';
 import type { Work } from '#api/lib/work.ts';
 import { callerOf } from '#api/middleware/find-caller.ts';
 import type { Queue } from '#api/jobs/queue.ts';
@@ -23,13 +24,14 @@ export interface Moment {
   clock: Clock;
   queue: Queue;
   runInThread: RunInThread;
+  logKey: LogKey;
   /** By key of the story. */
   records: Map<string, Record>;
   outcomes: ReadonlyMap<string, SheetOutcome>;
 }
 
 /** The registry's own work. */
-export const asRegistry = ({ em, clock, queue, runInThread }: Moment): Work => ({ em, clock, queue, runInThread, caller: null });
+export const asRegistry = ({ em, clock, queue, runInThread, logKey }: Moment): Work => ({ em, clock, queue, runInThread, logKey, caller: null });
 
 /** The work of an invented person with the roles held at that moment; refused like anyone's where the rules refuse it. */
 export const asPerson = async (moment: Moment, subject: string, action: Action, thing: Thing): Promise<Work> => {

@@ -10,6 +10,7 @@ import { Submission } from '#api/entities/submission.ts';
 import { recordAudit } from '#api/lib/audit.ts';
 import { runSql } from '#api/lib/run-sql.ts';
 import { inTransaction, type Work } from '#api/lib/work.ts';
+import { logEvent } from '#api/modules/log/append.ts';
 import { readSheetSeal } from '#api/modules/run-sheets/sheet-store.ts';
 import { embargo, freeze, lift, lockSubmission, supersede } from '#api/modules/submissions/life-cycle.ts';
 import { presentMessage } from '#api/modules/submissions/presenter.ts';
@@ -109,7 +110,10 @@ export const freezeSubmission = async (work: Work, submission: Submission, decis
   const kept = Boolean(submission.embargoUntil && submission.embargoUntil > dayOf(now));
   addState(work, name, kept ? 'embargoed' : 'frozen');
   await (kept ? embargo : freeze)(work, submission);
-  if (!kept) await supersedeEarlier(work, name);
+  if (!kept) {
+    await logEvent(work, 'frozen', name);
+    await supersedeEarlier(work, name);
+  }
   recordAudit(em, { at: now, action: kept ? 'entry.embargo' : 'entry.freeze', subjectType: 'entry', subjectId: versionedAccessionOf(name.accession, name.version), organisationId: submission.organisation.id, requestId: work.requestId ?? null, detail: { submission: submission.id, contentId: file.contentId, resultSha256: estimate.resultSha256 } });
   return name;
 };
@@ -123,6 +127,7 @@ export const liftEmbargo = (work: Work, id: string): Promise<boolean> =>
     await runSql(tx.em, 'select last from accession_counter for update');
     addState(tx, { accession, version }, 'frozen');
     await lift(tx, submission);
+    await logEvent(tx, 'frozen', { accession, version });
     await supersedeEarlier(tx, { accession, version });
     await supersedeIfLate(tx, submission, { accession, version });
     recordAudit(tx.em, { at: tx.clock.now(), action: 'entry.lift', subjectType: 'entry', subjectId: versionedAccessionOf(accession, version), organisationId: submission.organisation.id });

@@ -38,7 +38,12 @@ describe('secrets', () => {
     const first = readSecrets(file);
     expect(readSecrets(file)).toEqual(first);
     expect(statSync(file).mode & 0o777).toBe(0o600);
-    expect(new Set(Object.values(first)).size).toBe(5);
+    expect(new Set(Object.values(first)).size).toBe(6);
+    const { log, ...older } = first;
+    writeFileSync(file, JSON.stringify(older));
+    const completed = readSecrets(file);
+    expect(completed, 'a file from before there was a log gets a key of its own').toMatchObject(older);
+    expect([completed.log === log, readSecrets(file).log === completed.log]).toEqual([false, true]);
     writeFileSync(file, '{"admin": 1}');
     expect(() => readSecrets(file)).toThrow('is not as this program wrote it');
     expect(readFileSync(file, 'utf8')).toBe('{"admin": 1}');

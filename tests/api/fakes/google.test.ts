@@ -104,7 +104,7 @@ describe('sign-in through the stand-in', () => {
     const plan = { ...credentials, redirectUri: 'x', publicUrl: base };
     await expect(startGoogleStandIn({ ...plan, realClientId: '123.apps' })).rejects.toThrow('GOOGLE_CLIENT_ID is set');
     await expect(startGoogleStandIn({ ...plan, publicUrl: 'https://evenbeam.example' })).rejects.toThrow('public address');
-    const settings = { DATABASE_URL: 'postgres://a@127.0.0.1/b', SESSION_SECRET: 'x'.repeat(32), GOOGLE_CLIENT_ID: 'a', GOOGLE_CLIENT_SECRET: 'b', SMTP_URL: 'smtp://127.0.0.1', PUBLIC_URL: 'https://evenbeam.example', GOOGLE_AUTHORIZATION_URL: standIn.authorizationUrl };
+    const settings = { DATABASE_URL: 'postgres://a@127.0.0.1/b', SESSION_SECRET: 'x'.repeat(32), LOG_SIGNING_KEY: 'x', GOOGLE_CLIENT_ID: 'a', GOOGLE_CLIENT_SECRET: 'b', SMTP_URL: 'smtp://127.0.0.1', PUBLIC_URL: 'https://evenbeam.example', GOOGLE_AUTHORIZATION_URL: standIn.authorizationUrl };
     expect(() => configFrom(settings)).toThrow('local stand-in');
   });
 

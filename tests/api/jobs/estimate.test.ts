@@ -9,6 +9,7 @@ import { gateClassById } from '#shared/domain/gate-classes.ts';
 import { canonicalJson, contentIdOf } from '#shared/formats/canonical-json.ts';
 import { estimate } from '#shared/method/estimate.ts';
 import { readSheetSeal } from '#api/modules/run-sheets/sheet-store.ts';
+import { testLogKey } from '#tests/support/log-key.ts';
 import { makeDataset, makeDesk, makeDrawnSheet } from '#tests/support/record.ts';
 import { receive } from '#tests/support/life.ts';
 import { useTestApp } from '#tests/support/test-app.ts';
@@ -29,7 +30,7 @@ const startProcess = (): ReturnType<typeof spawn> =>
   spawn(process.execPath, ['--import', 'tsx', '--disable-warning=DeprecationWarning', 'api/worker.ts'], {
     stdio: 'ignore',
     env: {
-      ...process.env, NODE_ENV: 'test', DATABASE_URL: app().database.url, SESSION_SECRET: 'a secret for tests only, long enough', GOOGLE_CLIENT_ID: 'x', GOOGLE_CLIENT_SECRET: 'x',
+      ...process.env, NODE_ENV: 'test', DATABASE_URL: app().database.url, SESSION_SECRET: 'a secret for tests only, long enough', LOG_SIGNING_KEY: testLogKey, GOOGLE_CLIENT_ID: 'x', GOOGLE_CLIENT_SECRET: 'x',
       GOOGLE_AUTHORIZATION_URL: 'http://127.0.0.1:9/authorize', GOOGLE_TOKEN_URL: 'http://127.0.0.1:9/token', GOOGLE_USERINFO_URL: 'http://127.0.0.1:9/userinfo', SMTP_URL: 'smtp://127.0.0.1:9', LOG_LEVEL: 'silent', WORKER_THREADS: '1',
     },
   });

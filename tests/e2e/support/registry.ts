@@ -12,6 +12,7 @@ import { seedDemo } from '#api/demo/seed.ts';
 import { startGoogleStandIn } from '#api/fakes/google/start.ts';
 import { startMailStandIn } from '#api/fakes/mail/start.ts';
 import { registerPeople } from '#api/fakes/register-people.ts';
+import { newLogKey } from '#api/lib/log-key.ts';
 import { demoExcerpt } from '#tests/support/demo-excerpt.ts';
 import { createTestDatabase, dropTestDatabase } from '#tests/support/test-database.ts';
 
@@ -54,7 +55,7 @@ const startRegistry = async (): Promise<RunningRegistry> => {
   const mail = await startMailStandIn(join(folder, 'mail'));
   const database = await createTestDatabase();
   const env = {
-    NODE_ENV: 'production', HOST: '127.0.0.1', PORT: String(port), PUBLIC_URL: url, DATABASE_URL: database.url, SESSION_SECRET: 'a secret for these tests only, long enough',
+    NODE_ENV: 'production', HOST: '127.0.0.1', PORT: String(port), PUBLIC_URL: url, DATABASE_URL: database.url, SESSION_SECRET: 'a secret for these tests only, long enough', LOG_SIGNING_KEY: newLogKey(),
     GOOGLE_CLIENT_ID: credentials.clientId, GOOGLE_CLIENT_SECRET: credentials.clientSecret, GOOGLE_AUTHORIZATION_URL: google.authorizationUrl, GOOGLE_TOKEN_URL: google.tokenUrl,
     GOOGLE_USERINFO_URL: google.userinfoUrl, SMTP_URL: mail.url, DATA_DIR: folder, THREAD_FILE: resolve('dist/api/thread.js'), RATE_LIMITS: '0', WORKER_THREADS: '1',
   };

@@ -4,7 +4,7 @@ import { liftEmbargoes } from '#api/modules/entries/freeze.ts';
 import { decide } from '#api/modules/reviews/service.ts';
 import { runSql } from '#api/lib/run-sql.ts';
 import { bytesOf, makeDataset, makeDesk, makeDrawnSheet, workFor, type Desk } from '#tests/support/record.ts';
-import { accepted, inReview, stateOf } from '#tests/support/life.ts';
+import { accepted, inReview, stateOf, withdrawn } from '#tests/support/life.ts';
 import { asStranger, type Client } from '#tests/support/sign-in.ts';
 import { testStart, useTestApp } from '#tests/support/test-app.ts';
 
@@ -30,6 +30,7 @@ const as = async (url: string, sql: string): Promise<unknown[]> => {
 const recordTables: [table: string, column: string][] = [
   ['device', 'name'], ['run_sheet_file', 'bytes'], ['run_sheet_secret', 'seal'], ['submission_file', 'bytes'], ['submission_estimate', 'result'], ['submission_move', 'state'], ['submission_message', 'body'],
   ['decision', 'reason'], ['entry', 'gate_class'], ['entry_version', 'summary'], ['entry_bytes', 'bytes'], ['entry_state', 'state'],
+  ['log_leaf', 'hash'], ['log_node', 'hash'], ['log_head', 'root_hash'],
 ];
 
 describe('what is frozen', () => {
@@ -59,6 +60,7 @@ describe('what is frozen', () => {
     await expect(as(url, 'update accession_counter set last = last + 2')).rejects.toMatchObject({ code: 'EB003' });
     await expect(as(url, 'update accession_counter set last = last - 1')).rejects.toMatchObject({ code: 'EB003' });
     await expect(as(url, 'delete from accession_counter')).rejects.toMatchObject({ code: 'EB001' });
+    await expect(as(url, 'update log_size set size = size + 2')).rejects.toMatchObject({ code: 'EB003' });
   });
 
   it('is not fooled by a temporary table of a guarded name', async () => {
@@ -158,7 +160,7 @@ describe('a correction', () => {
 describe('a withdrawn version', () => {
   it('keeps its page and answers 410 for its data', async () => {
     const { accession } = await accepted(app(), desk, makeDataset(desk, null));
-    await runSql(app().deps.orm.em.fork(), `insert into entry_state (accession, version, state, at, reason) values ($1, 1, 'withdrawn', $2, 'the wrong qubit was recorded')`, [accession, app().clock.now()]);
+    await withdrawn(app(), { accession, version: 1 }, 'the wrong qubit was recorded');
     expect((await reader('get', `/api/v1/entries/${accession}`)).body).toMatchObject({ state: 'withdrawn', eligibility: expect.arrayContaining([expect.objectContaining({ code: 'withdrawn' })]) as unknown });
     for (const kind of ['dataset', 'replicates']) expect((await reader('get', `/api/v1/entries/${accession}/v/1/${kind}`)).body, kind).toMatchObject({ status: 410, code: 'withdrawn' });
     expect((await reader('get', `/api/v1/entries/${accession}/v/1/result`)).status).toBe(200);
