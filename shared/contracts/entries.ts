@@ -67,7 +67,7 @@ export const entry = entryItem.extend({
   }),
   eligibility: z.array(z.object({ code: z.string(), sentence: z.string(), remedy: z.string() })),
   versions: z.array(z.object({ version: z.number().int(), frozenAt: timestamp, method: z.string(), state: entryState, headline: figure.nullable() })),
-  links: z.object({ dataset: z.string(), result: z.string(), replicates: z.string(), seal: z.string().nullable(), page: z.string() }),
+  links: z.object({ dataset: z.string(), result: z.string(), replicates: z.string(), seal: z.string().nullable(), runSheet: z.string().nullable(), archive: z.string(), page: z.string() }),
 });
 
 export type EntryItem = z.infer<typeof entryItem>;

@@ -1,4 +1,5 @@
 import { canonicalJson, sha256Hex } from '#shared/formats/canonical-json.ts';
+import { littleEndianBytes } from '#shared/formats/float64.ts';
 import { readCircuits } from '#shared/formats/read-circuits.ts';
 import { readDataset } from '#shared/formats/read-dataset.ts';
 import { readSeal } from '#shared/formats/read-seal.ts';
@@ -35,12 +36,6 @@ export interface VectorFiles {
   circuits: Uint8Array;
 }
 
-const tableBytes = (values: Float64Array): Uint8Array => {
-  const view = new DataView(new ArrayBuffer(8 * values.length));
-  values.forEach((x, i) => view.setFloat64(8 * i, x, true));
-  return new Uint8Array(view.buffer);
-};
-
 /** Reads the files of a vector as the registry would and estimates: the result's canonical text and the digest of its replicates. */
 export function estimateVector(files: VectorFiles, replicates: number): { result: string; replicatesSha256: string } {
   const reading = readDataset(files.dataset);
@@ -50,5 +45,5 @@ export function estimateVector(files: VectorFiles, replicates: number): { result
   const circuits = readCircuits(files.circuits, dataset);
   if (seal?.ok === false || !circuits.ok) throw new Error(`Seal or circuits break the format: ${JSON.stringify([seal, circuits]).slice(0, 300)}`);
   const output = estimate({ dataset, contentId, gateClass, seal: seal?.seal ?? null, predict: circuits.circuits, replicates });
-  return { result: canonicalJson(output.result), replicatesSha256: sha256Hex(tableBytes(output.replicates.values)) };
+  return { result: canonicalJson(output.result), replicatesSha256: sha256Hex(littleEndianBytes(output.replicates.values)) };
 }

@@ -82,6 +82,6 @@ export const presentEntry = (shown: FrozenVersion, versions: readonly FrozenVers
     provenance: provenanceOf(row),
     eligibility,
     versions: versions.map((v) => ({ version: v.version, frozenAt: v.frozenAt.toISOString(), method: v.row.method, state: v.state, headline: headlineOf(v.row.summary.figures, v.row.register.length) })),
-    links: { dataset: `${api}/dataset`, result: `${api}/result`, replicates: `${api}/replicates`, seal: row.sealed ? `${api}/seal` : null, page: `/entries/${accession}/v/${version}` },
+    links: { dataset: `${api}/dataset`, result: `${api}/result`, replicates: `${api}/replicates`, seal: row.sealed ? `${api}/seal` : null, runSheet: row.runSheetId ? `${api}/run-sheet` : null, archive: `${api}/archive`, page: `/entries/${accession}/v/${version}` },
   };
 };

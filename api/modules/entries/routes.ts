@@ -3,6 +3,7 @@ import { entry, entryList, entryListQuery } from '#shared/contracts/entries.ts';
 import { EntryVersion } from '#api/entities/entry-version.ts';
 import { pageFrom, readTimeCursor } from '#api/lib/cursor.ts';
 import { defineRoute, type Route } from '#api/lib/define-route.ts';
+import { readArchive } from './archive.ts';
 import { presentItem } from './presenter.ts';
 import { listEntries } from './public-entries.ts';
 import { readEntry, readStored, type StoredKind } from './service.ts';
@@ -63,4 +64,14 @@ export const entryRoutes: Route[] = [
   stored('result', 'application/json', 'The result in its RFC 8785 form, as it was frozen.'),
   stored('replicates', 'application/octet-stream', 'The replicates: figures by replicates, row-major, float64 little-endian.'),
   stored('seal', 'application/json', 'The revealed seal of the run sheet.'),
+  stored('run-sheet', 'application/json', 'The run sheet, with the digest by which its seal was committed to.'),
+  defineRoute({
+    method: 'get',
+    path: '/api/v1/entries/:accession/v/:version/archive',
+    action: 'public.read',
+    summary: 'One zip file with dataset, run sheet, seal, result, replicates and their digests; the same version always gives the same bytes.',
+    params: versionParams,
+    produces: ['application/zip'],
+    handler: async ({ em, params, header }) => readArchive(em, params.accession, params.version, header('if-none-match')),
+  }),
 ];

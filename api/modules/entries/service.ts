@@ -2,6 +2,7 @@ import type { EntityManager } from '@mikro-orm/postgresql';
 import type { Entry } from '#shared/contracts/entries.ts';
 import { versionedAccessionOf } from '#shared/domain/ids.ts';
 import { AppError } from '#shared/errors/app-error.ts';
+import { isSame } from '#api/lib/etag.ts';
 import { runSql } from '#api/lib/run-sql.ts';
 import { bytes, type BytesReply } from '#api/lib/reply.ts';
 import { reasonsAgainst, type Candidate } from '#api/modules/boards/standing.ts';
@@ -25,13 +26,14 @@ export const readEntry = async (em: EntityManager, accession: string, version: n
   return presentEntry(shown, rows, reasons);
 };
 
-export type StoredKind = 'dataset' | 'result' | 'replicates' | 'seal';
+export type StoredKind = 'dataset' | 'result' | 'replicates' | 'seal' | 'run-sheet';
 
 const forms: Readonly<Record<StoredKind, { type: string; extension: string }>> = {
   dataset: { type: 'application/json', extension: 'dataset.json' },
   result: { type: 'application/json', extension: 'result.json' },
   replicates: { type: 'application/octet-stream', extension: 'replicates.f64' },
   seal: { type: 'application/json', extension: 'seal.json' },
+  'run-sheet': { type: 'application/json', extension: 'run-sheet.json' },
 };
 
 /** What is no longer handed out once an entry is withdrawn. */
@@ -47,16 +49,29 @@ const nameFor = async (em: EntityManager, version: PublicVersion, kind: StoredKi
   return row?.file_name ?? usual;
 };
 
+const sizes = {
+  entry: 'select sha256, length(bytes) as size from entry_bytes where accession = $1 and version = $2 and kind = $3',
+  sheet: 'select sha256, length(bytes) as size from run_sheet_file where run_sheet_id = $1',
+} as const;
+
+/** Where the bytes lie: with the entry, or, for the sheet, where they were drawn; null for an entry without a sheet. */
+const placeOf = async (em: EntityManager, { id, accession, version }: PublicVersion, kind: StoredKind): Promise<{ table: keyof typeof sizes; key: (string | number)[] } | null> => {
+  if (kind !== 'run-sheet') return { table: 'entry', key: [accession, version, kind] };
+  const [row] = await runSql<{ run_sheet_id: string | null }>(em, 'select run_sheet_id from entry_version where id = $1', [id]);
+  return row?.run_sheet_id ? { table: 'sheet', key: [row.run_sheet_id] } : null;
+};
+
 /** Stored bytes of a version, exactly as they were frozen; the strong ETag is their SHA-256. */
 export const readStored = async (em: EntityManager, accession: string, number: number, kind: StoredKind, ifNoneMatch: string | undefined): Promise<BytesReply> => {
   const version = await requireVersion(em, accession, number);
   if (version.state === 'withdrawn' && closedByWithdrawal.has(kind)) throw new AppError('withdrawn', `${versionedAccessionOf(accession, number)} was withdrawn; its ${kind} is no longer handed out. The page tells the reason.`);
-  const [row] = await runSql<{ sha256: string; size: number }>(em, 'select sha256, length(bytes) as size from entry_bytes where accession = $1 and version = $2 and kind = $3', [accession, number, kind]);
-  if (!row) throw new AppError('not-found', `${versionedAccessionOf(accession, number)} has no ${kind}: its circuits came from no run sheet.`);
+  const place = await placeOf(em, version, kind);
+  const [row] = place ? await runSql<{ sha256: string; size: number }>(em, sizes[place.table], place.key) : [];
+  if (!place || !row) throw new AppError('not-found', `${versionedAccessionOf(accession, number)} has no ${kind}: its circuits came from no run sheet.`);
   const etag = `"${row.sha256}"`;
   const headers = { etag, 'cache-control': 'public, max-age=0, must-revalidate' };
-  if (ifNoneMatch?.split(',').some((tag) => tag.trim().replace(/^W\//, '') === etag || tag.trim() === '*')) return bytes('', forms[kind].type, { status: 304, headers });
-  return bytes(streamBytes(em, 'entry', accession, number, kind), forms[kind].type, {
+  if (isSame(etag, ifNoneMatch)) return bytes('', forms[kind].type, { status: 304, headers });
+  return bytes(streamBytes(em, place.table, ...place.key), forms[kind].type, {
     headers: { ...headers, 'content-length': String(row.size), 'content-disposition': disposition(await nameFor(em, version, kind)), 'x-content-type-options': 'nosniff' },
   });
 };

@@ -39,6 +39,8 @@ export function ProvenanceSection({ entry }: { entry: Entry }) {
     { term: 'Result', value: <>{file(links.result, 'result.json')}; every figure, interval and gate map</> },
     { term: 'Replicates', value: <>{file(links.replicates, 'replicates')}; {formatCount(entry.replicates)} bootstrap replicates of every figure, float64 little-endian</> },
     ...(links.seal ? [{ term: 'Seal', value: <>{file(links.seal, 'seal.json')}; the secret that chose the sealed circuits</> }] : []),
+    ...(links.runSheet ? [{ term: 'Run sheet file', value: <><a href={links.runSheet} download>run-sheet.json</a>; the circuits as they were drawn, with the digest of the secret</> }] : []),
+    { term: 'Archive', value: <>{file(links.archive, `${entry.accession}.${entry.version}.zip`)}; all of these files with their digests, always the same bytes</> },
     { term: 'Content id', value: <span className="hash">{p.contentId}</span> },
     { term: 'SHA-256 of the bytes', value: <span className="hash">{p.bytesSha256}</span> },
     { term: 'SHA-256 of the result', value: <span className="hash">{p.resultSha256}</span> },
