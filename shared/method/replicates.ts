@@ -33,31 +33,34 @@ export function drawReplicates(problem: PatchProblem, passes: Passes, count: num
   const drawn = new Float64Array(GROUPS * rows * 4);
   const residual = new Float64Array(GROUPS * rows * 4);
   const step = new Float64Array(GROUPS * columns * 4);
+  const predicted = Array.from({ length: 4 }, () => new Float64Array(rows));
+  const centre = new Float64Array(4 * columns);
+  for (let l = 0; l < 4; l++) centre.set(passes.e, l * columns);
   let dropped = 0;
   for (let from = 0; from < count; from += 4 * GROUPS) {
     const here = Math.min(4 * GROUPS, count - from);
     const groups = Math.ceil(here / 4);
     drawn.fill(0);
-    for (let r = 0; r < here; r++) {
-      const at = (r >> 2) * rows * 4 + (r & 3);
-      table.draw(generator, drawn, at, 4);
-      for (let i = 0; i < rows; i++) drawn[at + 4 * i]! -= smoothed[i]!;
-    }
+    for (let r = 0; r < here; r++) table.draw(generator, drawn, (r >> 2) * rows * 4 + (r & 3), 4);
+    for (let g = 0; g < groups; g++) subtractFromFour(drawn, g * rows * 4, smoothed);
     inverse.apply(drawn, step, groups);
-    for (let r = 0; r < here; r++) addStep(parameters, (from + r) * columns, passes.e, step, (r >> 2) * columns * 4 + (r & 3), columns);
+    for (let g = 0; g < groups; g++) addSteps(parameters, (from + 4 * g) * columns, centre, 0, step, g * columns * 4, columns, Math.min(4, here - 4 * g));
     if (!passes.stopped) {
-      for (let r = 0; r < here; r++) {
-        const at = (r >> 2) * rows * 4 + (r & 3);
-        const e = parameters.subarray((from + r) * columns, (from + r + 1) * columns);
-        if (fill) fill(from + r, e, maps);
-        else applyParameters(set, layout, e, maps);
-        evaluator.run(maps, residual, at, 4);
-        for (let i = 0; i < rows; i++) residual[at + 4 * i] = observed[i]! + drawn[at + 4 * i]! - residual[at + 4 * i]!;
+      for (let g = 0; g < groups; g++) {
+        const lanes = Math.min(4, here - 4 * g);
+        for (let l = 0; l < lanes; l++) {
+          const b = from + 4 * g + l;
+          const e = parameters.subarray(b * columns, (b + 1) * columns);
+          if (fill) fill(b, e, maps);
+          else applyParameters(set, layout, e, maps);
+          evaluator.run(maps, predicted[l]!);
+        }
+        takeResiduals(residual, drawn, g * rows * 4, observed, predicted);
       }
       inverse.apply(residual, step, groups);
-      for (let r = 0; r < here; r++) {
-        const row = parameters.subarray((from + r) * columns, (from + r + 1) * columns);
-        addStep(parameters, (from + r) * columns, row, step, (r >> 2) * columns * 4 + (r & 3), columns);
+      for (let g = 0; g < groups; g++) {
+        const at = (from + 4 * g) * columns;
+        addSteps(parameters, at, parameters, at, step, g * columns * 4, columns, Math.min(4, here - 4 * g));
       }
     }
     for (let r = from; r < from + here; r++) {
@@ -69,6 +72,30 @@ export function drawReplicates(problem: PatchProblem, passes: Passes, count: num
   return { count, parameters, finite, dropped };
 }
 
-function addStep(out: Float64Array, at: number, from: Float64Array, step: Float64Array, stepAt: number, columns: number): void {
-  for (let j = 0; j < columns; j++) out[at + j] = from[j]! + step[stepAt + 4 * j]!;
+/** Takes x from each of four interleaved vectors at `at`. Walking all four together reads every line of memory once. */
+function subtractFromFour(out: Float64Array, at: number, x: Float64Array): void {
+  for (let i = 0, p = at; i < x.length; i++, p += 4) {
+    const s = x[i]!;
+    out[p]! -= s;
+    out[p + 1]! -= s;
+    out[p + 2]! -= s;
+    out[p + 3]! -= s;
+  }
+}
+
+/** f + (f_b − s) − p(e_b) for four replicates, interleaved at `at`. */
+function takeResiduals(out: Float64Array, drawn: Float64Array, at: number, observed: Float64Array, predicted: readonly Float64Array[]): void {
+  const [p0, p1, p2, p3] = [predicted[0]!, predicted[1]!, predicted[2]!, predicted[3]!];
+  for (let i = 0, p = at; i < observed.length; i++, p += 4) {
+    const f = observed[i]!;
+    out[p] = f + drawn[p]! - p0[i]!;
+    out[p + 1] = f + drawn[p + 1]! - p1[i]!;
+    out[p + 2] = f + drawn[p + 2]! - p2[i]!;
+    out[p + 3] = f + drawn[p + 3]! - p3[i]!;
+  }
+}
+
+/** Rows of `out` from `at` on: rows of `from` plus the steps of as many replicates as `lanes` says, interleaved at `stepAt`. */
+function addSteps(out: Float64Array, at: number, from: Float64Array, fromAt: number, step: Float64Array, stepAt: number, columns: number, lanes: number): void {
+  for (let l = 0; l < lanes; l++) for (let j = 0; j < columns; j++) out[at + l * columns + j] = from[fromAt + l * columns + j]! + step[stepAt + 4 * j + l]!;
 }
