@@ -1,5 +1,6 @@
 import { ApiToken } from './api-token.ts';
 import { AuditEvent } from './audit-event.ts';
+import { Campaign } from './campaign.ts';
 import { Decision } from './decision.ts';
 import { Device } from './device.ts';
 import { EntryStateRow } from './entry-state.ts';
@@ -21,5 +22,5 @@ import { User } from './user.ts';
 /** Every entity, listed by hand so that a bundle needs no folder scan. */
 export const entities = [
   User, Organisation, Membership, RoleGrant, ApiToken, AuditEvent, IdempotencyKey, JobRun, MailMessage,
-  Device, RunSheet, Submission, SubmissionFile, SubmissionEstimate, SubmissionMove, SubmissionMessage, Decision, EntryVersion, EntryStateRow,
+  Device, RunSheet, Submission, SubmissionFile, SubmissionEstimate, SubmissionMove, SubmissionMessage, Decision, EntryVersion, EntryStateRow, Campaign,
 ];

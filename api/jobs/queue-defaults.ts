@@ -16,6 +16,8 @@ const usual: QueueOptions = { retryLimit: 3, retryDelay: 2, retryBackoff: true, 
 /** Where a queue differs from the usual. A mail server may be away for hours: 12 tries span about two. */
 const special: Partial<Record<QueueName, Partial<QueueOptions>>> = {
   'deliver-mail': { retryLimit: 12, expireInSeconds: 5 * 60 },
+  // The campaign notes what failed for good, and a steward may have it tried again.
+  're-estimate': { retryLimit: 2 },
 };
 
 /** How lost and failed attempts at a queue's jobs are treated. */

@@ -6,6 +6,8 @@ export const queues = {
   'draw-sheet': z.object({ runSheet: z.string() }),
   'lift-embargoes': z.object({}),
   'deliver-mail': z.object({}),
+  're-estimate': z.object({ campaign: z.string(), entryVersion: z.uuid() }),
+  'advance-campaigns': z.object({}),
   'house-keeping': z.object({}),
 } as const;
 

@@ -5,6 +5,7 @@ export const accessionOf = (n: number): string => `EVB-${sixDigits(n)}`;
 export const versionedAccessionOf = (accession: string, version: number): string => `${accession}.${version}`;
 export const runSheetIdOf = (n: number): string => `RS-${sixDigits(n)}`;
 export const submissionIdOf = (n: number): string => `S-${sixDigits(n)}`;
+export const campaignIdOf = (n: number): string => `C-${sixDigits(n)}`;
 
 export const accessionPattern = /^EVB-\d{6,9}$/;
 export const runSheetPattern = /^RS-\d{6,9}$/;

@@ -60,8 +60,16 @@ export const rules = {
   'review.release': { standings: ['curator'], states: underReview },
   'review.decide': { standings: ['curator'], states: underReview },
 
+  'campaign.read': { standings: ['steward'] },
+  'campaign.start': { standings: ['steward'] },
+  'campaign.pause': { standings: ['steward'] },
+  'campaign.resume': { standings: ['steward'] },
+  'campaign.cancel': { standings: ['steward'] },
+  'campaign.retry': { standings: ['steward'] },
+
   'audit.read': { standings: ['steward'] },
   'job.read': { standings: ['steward'] },
+  'job.retry': { standings: ['steward'] },
   'mail.read': { standings: ['steward'] },
   'people.read': { standings: ['steward'] },
   'people.change': { standings: ['steward'] },

@@ -14,6 +14,8 @@ export interface EstimateDatasetInput {
   /** The opened seal where the dataset matched its run sheet. */
   seal: Seal | null;
   replicates: number;
+  /** Method version; the official one unless told. */
+  method?: string;
 }
 
 export interface EstimateDatasetOutput {
@@ -45,11 +47,11 @@ const littleEndian = ({ values }: ReplicateTable): Uint8Array => {
   return bytes;
 };
 
-/** The official estimate of a stored dataset, and beside it what the review looks at: drift by block, sealed circuits one by one. */
-export const estimateDataset = ({ bytes, seal, replicates }: EstimateDatasetInput, report: (progress: EstimateReport) => void): EstimateDatasetOutput => {
+/** The estimate of a stored dataset, and beside it what the review looks at: drift by block, sealed circuits one by one. */
+export const estimateDataset = ({ bytes, seal, replicates, method }: EstimateDatasetInput, report: (progress: EstimateReport) => void): EstimateDatasetOutput => {
   report({ stage: 'design', fraction: 0.01 });
   const { dataset, contentId, gateClass } = readStored(bytes);
-  const input = { dataset, contentId, gateClass, seal };
+  const input = { dataset, contentId, gateClass, seal, ...(method === undefined ? {} : { method }) };
   const { result, replicates: table } = estimate({
     ...input,
     replicates,

@@ -8,6 +8,8 @@ const places = {
   sheet: { from: 'run_sheet_file', column: 'bytes', where: 'run_sheet_id = $1' },
   result: { from: 'submission_estimate', column: 'result', where: 'id = $1' },
   entry: { from: 'entry_bytes', column: 'bytes', where: 'accession = $1 and version = $2 and kind = $3' },
+  'added-result': { from: 'entry_result', column: 'result', where: 'entry_version_id = $1 and method = $2' },
+  'added-replicates': { from: 'entry_result', column: 'replicates', where: 'entry_version_id = $1 and method = $2' },
 } as const;
 type Place = keyof typeof places;
 
