@@ -33,16 +33,17 @@ export function drawReplicates(problem: PatchProblem, passes: Passes, count: num
   const drawn = new Float64Array(GROUPS * rows * 4);
   const residual = new Float64Array(GROUPS * rows * 4);
   const step = new Float64Array(GROUPS * columns * 4);
-  const predicted = Array.from({ length: 4 }, () => new Float64Array(rows));
+  const four = Array.from({ length: 4 }, () => new Float64Array(rows));
   const centre = new Float64Array(4 * columns);
   for (let l = 0; l < 4; l++) centre.set(passes.e, l * columns);
   let dropped = 0;
   for (let from = 0; from < count; from += 4 * GROUPS) {
     const here = Math.min(4 * GROUPS, count - from);
     const groups = Math.ceil(here / 4);
-    drawn.fill(0);
-    for (let r = 0; r < here; r++) table.draw(generator, drawn, (r >> 2) * rows * 4 + (r & 3), 4);
-    for (let g = 0; g < groups; g++) subtractFromFour(drawn, g * rows * 4, smoothed);
+    for (let g = 0; g < groups; g++) {
+      for (let l = 0; l < Math.min(4, here - 4 * g); l++) table.draw(generator, four[l]!, 0, 1);
+      takeCentred(drawn, g * rows * 4, four, smoothed);
+    }
     inverse.apply(drawn, step, groups);
     for (let g = 0; g < groups; g++) addSteps(parameters, (from + 4 * g) * columns, centre, 0, step, g * columns * 4, columns, Math.min(4, here - 4 * g));
     if (!passes.stopped) {
@@ -53,9 +54,9 @@ export function drawReplicates(problem: PatchProblem, passes: Passes, count: num
           const e = parameters.subarray(b * columns, (b + 1) * columns);
           if (fill) fill(b, e, maps);
           else applyParameters(set, layout, e, maps);
-          evaluator.run(maps, predicted[l]!);
+          evaluator.run(maps, four[l]!);
         }
-        takeResiduals(residual, drawn, g * rows * 4, observed, predicted);
+        takeResiduals(residual, drawn, g * rows * 4, observed, four);
       }
       inverse.apply(residual, step, groups);
       for (let g = 0; g < groups; g++) {
@@ -72,14 +73,15 @@ export function drawReplicates(problem: PatchProblem, passes: Passes, count: num
   return { count, parameters, finite, dropped };
 }
 
-/** Takes x from each of four interleaved vectors at `at`. Walking all four together reads every line of memory once. */
-function subtractFromFour(out: Float64Array, at: number, x: Float64Array): void {
-  for (let i = 0, p = at; i < x.length; i++, p += 4) {
-    const s = x[i]!;
-    out[p]! -= s;
-    out[p + 1]! -= s;
-    out[p + 2]! -= s;
-    out[p + 3]! -= s;
+/** f_b − s for four replicates, interleaved at `at`. Walking all four together reads every line of memory once. */
+function takeCentred(out: Float64Array, at: number, drawn: readonly Float64Array[], smoothed: Float64Array): void {
+  const [f0, f1, f2, f3] = [drawn[0]!, drawn[1]!, drawn[2]!, drawn[3]!];
+  for (let i = 0, p = at; i < smoothed.length; i++, p += 4) {
+    const s = smoothed[i]!;
+    out[p] = f0[i]! - s;
+    out[p + 1] = f1[i]! - s;
+    out[p + 2] = f2[i]! - s;
+    out[p + 3] = f3[i]! - s;
   }
 }
 
