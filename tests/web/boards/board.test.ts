@@ -34,6 +34,12 @@ describe('how a board is read', () => {
     for (const bad of ['figure=speed', 'within=-1', 'within=abc', 'within=1e9']) expect(viewOf(new URLSearchParams(bad))).toEqual({ figure: 'retained-signal-16', modality: undefined, provider: undefined, within: undefined });
   });
 
+  it('names a method version only where it could be one', () => {
+    expect(viewOf(new URLSearchParams('method=M2')).method).toBe('M2');
+    for (const bad of ['method=', 'method=M0', 'method=m2', 'method=M2-x']) expect(viewOf(new URLSearchParams(bad)).method).toBeUndefined();
+    expect(boardJsonAddress('a/1', viewOf(new URLSearchParams('method=M2')))).toBe('/api/v1/boards/a/1?figure=retained-signal-16&method=M2');
+  });
+
   it('a view is a filter only where it leaves entries out', () => {
     expect([isFiltered(viewOf(new URLSearchParams('figure=readout-loss'))), isFiltered(viewOf(new URLSearchParams('provider=x')))]).toEqual([false, true]);
   });

@@ -11,6 +11,7 @@ import { viewOf } from '#web/features/boards/board-view.ts';
 import { BoardBody } from '#web/features/boards/components/board-body.tsx';
 import { BoardFilters } from '#web/features/boards/components/board-filters.tsx';
 import { BoardHead } from '#web/features/boards/components/board-head.tsx';
+import { BoardMethod } from '#web/features/boards/components/board-method.tsx';
 import { NotListed } from '#web/features/boards/components/not-listed.tsx';
 import { OwnTray } from '#web/features/boards/components/own-tray.tsx';
 
@@ -31,6 +32,7 @@ export function Component() {
       <Wrap>
         {query.data ? <BoardHead board={query.data} /> : <PageHead above={<Link to="/boards">Boards</Link>} title={query.isError ? 'Board' : gateClass} />}
         <BoardFilters filters={query.data?.filters} />
+        {query.data ? <BoardMethod board={query.data} /> : null}
         <section className="boardsec" aria-label="The board" aria-busy={query.isFetching || undefined}>
           <Read level={2} query={query} what="The board" loading="Loading the board" rows={8}
             missing={<EmptyState level={2} title="There is no such gate class" act={<Link className="btn" to="/boards">All boards</Link>}>{`No board has the gate class ${gateClass}.`}</EmptyState>}>

@@ -18,15 +18,19 @@ export const readingWords = (figure: BoardFigure): string => (boardReadings[figu
 /** Spans offered for the last circuit run, in days. */
 export const withinChoices = [30, 90, 180, 365] as const;
 
+const methodName = /^M[1-9][0-9]{0,3}$/;
+
 /** Reads the view out of an address; anything unknown falls back to what the board opens with. */
 export const viewOf = (search: URLSearchParams): BoardView => {
   const figure = boardFigure.safeParse(search.get('figure'));
   const days = Number(search.get('within'));
+  const method = search.get('method') ?? '';
   return {
     figure: figure.success ? figure.data : 'retained-signal-16',
     modality: search.get('modality') ?? undefined,
     provider: search.get('provider') ?? undefined,
     within: Number.isInteger(days) && days >= 1 && days <= 36_500 ? days : undefined,
+    method: methodName.test(method) ? method : undefined,
   };
 };
 

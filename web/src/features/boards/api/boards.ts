@@ -11,6 +11,8 @@ export interface BoardView {
   modality: string | undefined;
   provider: string | undefined;
   within: number | undefined;
+  /** Method version; absent: the official one. */
+  method?: string | undefined;
 }
 
 const apiPath = (gateClass: string): string => `/api/v1/boards/${gateClass.split('/').map(encodeURIComponent).join('/')}`;
@@ -21,6 +23,7 @@ export const boardJsonAddress = (gateClass: string, view: BoardView): string => 
   if (view.modality) search.set('modality', view.modality);
   if (view.provider) search.set('provider', view.provider);
   if (view.within) search.set('within', String(view.within));
+  if (view.method) search.set('method', view.method);
   return `${apiPath(gateClass)}?${search}`;
 };
 
