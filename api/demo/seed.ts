@@ -15,6 +15,8 @@ export interface SeedOptions {
   progress: (words: string, share: number) => void;
   /** Only these stories, for tests; all of them otherwise. */
   told?: readonly Story[];
+  /** When it is made; the clock's now unless told. */
+  now?: Date;
 }
 
 /** Share of the whole that goes to measuring and estimating; measured on two cores. */
@@ -32,7 +34,7 @@ const nextSheet = async (deps: OwnedDeps): Promise<number> => {
  * What takes long is done ahead, in threads on all cores; the rest is one transaction, so that a demo is there whole or
  * not at all, and an interrupted one is begun anew. The same on every machine, save for the ids that no file bears.
  */
-export const seedDemo = async ({ config, progress, told = stories }: SeedOptions): Promise<void> => {
+export const seedDemo = async ({ config, progress, told = stories, now }: SeedOptions): Promise<void> => {
   const deps = await makeDeps(config);
   try {
     const orders = ordersOf(told, await nextSheet(deps));
@@ -40,7 +42,7 @@ export const seedDemo = async ({ config, progress, told = stories }: SeedOptions
     progress(`Drawing ${orders.length} run sheets and measuring on simulated devices`, 0);
     const outcomes = await foresee(orders, (done, share) => progress(`Estimating ${done} of ${files}`, ahead * share));
     let month = '';
-    await liveThrough(deps, scriptOf(told), orders, outcomes, (act, share) => {
+    await liveThrough(deps, scriptOf(told, now ?? deps.clock.now()), orders, outcomes, (act, share) => {
       const now = act.at.toISOString().slice(0, 7);
       if (now !== month) progress(`Reviewing and freezing, ${now}`, ahead + (1 - ahead) * share);
       month = now;

@@ -22,6 +22,9 @@ export const lastDay = new Date('2026-11-30T18:00:00Z');
 
 const seconds = (from: Date, count: number): Date => new Date(from.getTime() + count * 1000);
 
+/** A claim lapses after a fortnight; from then on the one claimed case is claimed once more on the day the demo is made. */
+const fortnight = 14 * 86_400;
+
 /** Acts of one round, from its file to its decision, as far as the story goes. */
 const roundActs = (story: Story, times: RoundTimes, index: 0 | 1): Act[] => {
   const { end } = story;
@@ -71,10 +74,17 @@ const actsOf = (story: Story): Act[] => {
   return acts;
 };
 
-/** Everything that happens, in the order of time. */
-export const scriptOf = (stories: readonly Story[]): Act[] => {
+/** Claims that would have lapsed by now, claimed anew: a demo that is made later still shows a case in a curator's hands. */
+const renewals = (stories: readonly Story[], now: Date): Act[] => {
+  const claimed = stories.filter(({ end }) => end.kind === 'in-review' && end.claimed);
+  const lapsed = claimed.filter((story) => seconds(timesOf(story).first.claimed, fortnight) <= now);
+  return lapsed.map((story, i) => ({ at: seconds(now, i), name: `${story.key}: claim again`, run: (moment) => curator.claim(moment, story) }));
+};
+
+/** Everything that happens, in the order of time; `now` is when the demo is made. */
+export const scriptOf = (stories: readonly Story[], now: Date): Act[] => {
   const acts = stories.flatMap(actsOf).sort((a, b) => a.at.getTime() - b.at.getTime());
   const last = acts.at(-1);
   if (last && last.at > lastDay) throw new Error(`${last.name} would come after the last day of the demo.`);
-  return acts;
+  return [...acts, ...renewals(stories, now)];
 };

@@ -3,15 +3,18 @@ import { MessageChannel } from 'node:worker_threads';
 import { Piscina } from 'piscina';
 import type { SheetOrder, SheetOutcome } from './work.ts';
 
-const isLong = (order: SheetOrder): boolean => order.sheet.register.length > 1;
+const sizeOf = (order: SheetOrder): number => order.sheet.register.length;
 
-/** Seconds of one core, roughly, for the share done. */
-const costOf = (order: SheetOrder): number => order.runs.length * (isLong(order) ? 14 : 1);
+/** Seconds of one core by size of the register, measured; for the share done. */
+const secondsBySize: readonly number[] = [0, 1, 11, 17, 23, 30];
+const costOf = (order: SheetOrder): number => order.runs.length * (secondsBySize[sizeOf(order)] ?? 30);
 
-/** Pairs spread among the short ones and none at the end: the count goes on, and all cores are busy to the last. */
+/** Registers spread among the short ones, the longest first and none at the end: the count goes on, and all cores are busy to the last. */
 const spread = (orders: readonly SheetOrder[]): SheetOrder[] => {
-  const mixed = orders.filter((order) => !isLong(order));
-  orders.filter(isLong).forEach((order, i) => mixed.splice(i * 11, 0, order));
+  const mixed = orders.filter((order) => sizeOf(order) === 1);
+  const long = orders.filter((order) => sizeOf(order) > 1).sort((a, b) => costOf(b) - costOf(a));
+  const apart = 1 + Math.floor(mixed.length / (long.length + 1));
+  long.forEach((order, i) => mixed.splice(i * apart, 0, order));
   return mixed;
 };
 

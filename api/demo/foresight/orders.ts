@@ -6,7 +6,9 @@ import { timetableOf, type Timetable } from '#api/demo/plan/timetable.ts';
 import { contributorsOf } from '#api/demo/plan/who.ts';
 import type { DeviceModel } from '#api/demo/simulator/device-model.ts';
 import { usualReplicates } from '#api/modules/submissions/receive.ts';
+import { gateClassById } from '#shared/domain/gate-classes.ts';
 import { runSheetIdOf } from '#shared/domain/ids.ts';
+import { patchPlans } from '#shared/runsheet/sheet-plan.ts';
 import type { RunOrder, SheetOrder } from './work.ts';
 
 export const deviceOf = (story: Story): DemoDevice => {
@@ -15,8 +17,15 @@ export const deviceOf = (story: Story): DemoDevice => {
   return device;
 };
 
-/** Hours that a run takes at most: a quarter more circuits for the seal, and room for a sheet that had to grow. */
-const hoursOf = (story: Story): number => (1.25 * 1.5 * story.circuits * story.shots) / deviceOf(story).shotsPerSecond / 3600;
+/** Circuits of the sheet as it is asked for, all patches and the sealed ones included. */
+const sheetCircuits = ({ gateClass, circuits }: Story): number => {
+  const found = gateClassById(gateClass);
+  if (!found) throw new Error(`There is no gate class ${gateClass}.`);
+  return patchPlans(found, circuits, true).reduce((sum, plan) => sum + plan.estimated + plan.sealed, 0);
+};
+
+/** Hours that a run takes at most: with room for a sheet that had to grow. */
+const hoursOf = (story: Story): number => (1.5 * sheetCircuits(story) * story.shots) / deviceOf(story).shotsPerSecond / 3600;
 export const timesOf = (story: Story): Timetable => timetableOf(story, hoursOf(story));
 
 /** The truth with the flaw of a run that went wrong. */

@@ -21,4 +21,5 @@ export const exchanges: readonly Exchange[] = [
   { question: 'Were the other qubits idle while the pair was measured?', answer: 'Yes, all of them in |0⟩ and not driven.' },
   { question: 'The circuits are of your own design. The dataset is estimated and published, but it is never ranked. Is that clear?', answer: 'It is. We had these sequences before we knew of run sheets.' },
   { question: 'Was the wiring of this run the same as that of December 2025?', answer: 'It was; only the firmware is newer.' },
+  { question: 'Was each pair run with the third ion at rest, or were the circuits of several patches run side by side?', answer: 'One patch after another, and the ions outside it at rest in |0⟩. The circuits over all three came last.' },
 ];

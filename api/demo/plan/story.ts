@@ -49,6 +49,9 @@ const usual: Readonly<Record<string, Pick<Story, 'circuits' | 'shots'>>> = {
   'clifford-t-1q/1': { circuits: 300, shots: 1000 },
   'half-turn-1q/1': { circuits: 200, shots: 1000 },
   'quarter-turn-cz-2q/1': { circuits: 1200, shots: 1000 },
+  'chained-cz-2q/1': { circuits: 600, shots: 1000 },
+  'chained-cz-3q/1': { circuits: 600, shots: 1000 },
+  'chained-cz-5q/1': { circuits: 600, shots: 1000 },
 };
 
 const slug = (text: string): string => text.toLowerCase().replace(/[^a-z0-9]+/g, '-');

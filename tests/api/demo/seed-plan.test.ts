@@ -26,13 +26,13 @@ describe('the plan of the demo registry', () => {
     expect(kinds.filter((kind) => kind === 'laboratory')).toHaveLength(1);
   });
 
-  it('measures nine devices or more, of six modalities, in four gate classes', () => {
+  it('measures nine devices or more, of six modalities, in seven gate classes', () => {
     expect(devices.length).toBeGreaterThanOrEqual(9);
     expect([...new Set(devices.map(({ modality }) => modality))].sort()).toEqual(['neutral-atom', 'photonic', 'simulated', 'spin', 'superconducting', 'trapped-ion']);
-    expect([...new Set(stories.map(({ gateClass }) => gateClass))].sort()).toEqual(['clifford-t-1q/1', 'half-turn-1q/1', 'quarter-turn-1q/1', 'quarter-turn-cz-2q/1']);
+    expect([...new Set(stories.map(({ gateClass }) => gateClass))].sort()).toEqual(['chained-cz-2q/1', 'chained-cz-3q/1', 'chained-cz-5q/1', 'clifford-t-1q/1', 'half-turn-1q/1', 'quarter-turn-1q/1', 'quarter-turn-cz-2q/1']);
   });
 
-  it.each([['quarter-turn-1q/1', 10], ['clifford-t-1q/1', 3], ['quarter-turn-cz-2q/1', 3]])('gives the board of %s at least %i devices', (gateClass, least) => {
+  it.each([['quarter-turn-1q/1', 10], ['clifford-t-1q/1', 3], ['quarter-turn-cz-2q/1', 3], ['chained-cz-2q/1', 3], ['chained-cz-3q/1', 2], ['chained-cz-5q/1', 1]])('gives the board of %s at least %i devices', (gateClass, least) => {
     expect(new Set(publicOnes.filter((s) => s.gateClass === gateClass).map((s) => s.device)).size).toBeGreaterThanOrEqual(least);
   });
 
@@ -56,14 +56,20 @@ describe('the plan of the demo registry', () => {
 
   it('draws keys, seeds and instants apart', () => {
     expect(new Set(stories.map(({ key }) => key)).size).toBe(stories.length);
-    const acts = scriptOf(stories);
+    const acts = scriptOf(stories, lastDay);
     expect(new Set(acts.map(({ at }) => at.getTime())).size).toBe(acts.length);
     expect(acts.every(({ at }, i) => i === 0 || at >= (acts[i - 1]?.at ?? at))).toBe(true);
   });
 
+  it('claims a case anew whose claim has lapsed when the demo is made, and only then', () => {
+    const added = (now: string): string[] => scriptOf(stories, new Date(now)).slice(scriptOf(stories, lastDay).length).map(({ at, name }) => `${at.toISOString()} ${name}`);
+    expect(added('2026-12-01T12:00:00Z')).toEqual([]);
+    expect(added('2027-03-01T12:00:00Z')).toEqual(['2027-03-01T12:00:00.000Z quill-7-clifford-t-1q-1-2026-11-17: claim again']);
+  });
+
   it('is the same each time it is made', () => {
     expect(ordersOf(stories, 1)).toEqual(ordersOf(stories, 1));
-    expect(scriptOf(stories).map(({ at, name }) => [at, name])).toEqual(scriptOf(stories).map(({ at, name }) => [at, name]));
+    expect(scriptOf(stories, lastDay).map(({ at, name }) => [at, name])).toEqual(scriptOf(stories, lastDay).map(({ at, name }) => [at, name]));
   });
 
   it('numbers the sheets in the order in which they are asked for, from the number given', () => {

@@ -1,4 +1,5 @@
 import { beforeAll, describe, expect, it } from 'vitest';
+import { lastDay } from '#api/demo/acts/script.ts';
 import { foresee } from '#api/demo/foresight/foresee.ts';
 import { ordersOf } from '#api/demo/foresight/orders.ts';
 import { seedDemo } from '#api/demo/seed.ts';
@@ -13,7 +14,7 @@ const database = useTestDatabase();
 const rows = <Row extends object>(sql: string): Promise<Row[]> => runSql<Row>(database().orm.em.fork(), sql);
 const told: { words: string; share: number }[] = [];
 
-const seed = (progress: (words: string, share: number) => void, stories = demoExcerpt): Promise<void> => seedDemo({ config: testConfig(database().url, { LOG_LEVEL: 'silent' }), progress, told: stories });
+const seed = (progress: (words: string, share: number) => void, stories = demoExcerpt): Promise<void> => seedDemo({ config: testConfig(database().url, { LOG_LEVEL: 'silent' }), progress, told: stories, now: lastDay });
 
 beforeAll(async () => {
   await registerPeople(database().orm.em.fork(), new Date('2024-01-08T09:00:00Z'));
