@@ -48,13 +48,13 @@ const NOISE = [1e-4, 1e-3, 3e-3, 6e-3, 1e-2];
 /** The grid, in the order of the tables. */
 export const cells: readonly Cell[] = [
   ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: NOISE, coherent: [0, 0.5, 1], shots: [500] }, ONE),
-  ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: NOISE, coherent: [0, 1], shots: [2000] }, ONE),
+  ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: NOISE, coherent: [1], shots: [2000] }, ONE),
   ...cellsOf({ gateClass: 'clifford-t-1q/1', noise: NOISE, coherent: [0, 1], shots: [500] }, ONE),
   ...cellsOf({ gateClass: 'clifford-t-1q/1', noise: [1e-3, 3e-3, 6e-3], coherent: [1], shots: [2000] }, ONE),
   ...cellsOf({ gateClass: 'half-turn-1q/1', noise: [1e-3], coherent: [0, 1], shots: [1000] }, ONE),
-  ...cellsOf({ gateClass: 'quarter-turn-cz-2q/1', noise: [3e-3], coherent: [0.5], shots: [1000] }, PAIR),
-  ...cellsOf({ gateClass: 'quarter-turn-cz-2q/1', noise: [1e-2, 2e-2], coherent: [0, 1], shots: [1000] }, PAIR),
-  ...cellsOf({ gateClass: 'chained-cz-2q/1', noise: [3e-3], coherent: [0.5], shots: [1000] }, PAIR),
-  ...cellsOf({ gateClass: 'chained-cz-2q/1', noise: [1e-2, 2e-2], coherent: [0, 1], shots: [1000] }, PAIR),
-  ...cellsOf({ gateClass: 'chained-cz-3q/1', noise: [6e-3, 2e-2], coherent: [0.5], shots: [1000] }, PAIR),
+  ...cellsOf({ gateClass: 'quarter-turn-cz-2q/1', noise: [3e-3, 2e-2], coherent: [0.5], shots: [1000] }, PAIR),
+  ...cellsOf({ gateClass: 'quarter-turn-cz-2q/1', noise: [1e-2], coherent: [1], shots: [1000] }, PAIR),
+  ...cellsOf({ gateClass: 'chained-cz-2q/1', noise: [1e-2], coherent: [1], shots: [1000] }, PAIR),
+  ...cellsOf({ gateClass: 'chained-cz-2q/1', noise: [2e-2], coherent: [0.5], shots: [1000] }, PAIR),
+  ...cellsOf({ gateClass: 'chained-cz-3q/1', noise: [1e-2], coherent: [0.5], shots: [1000] }, PAIR),
 ];
