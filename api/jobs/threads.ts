@@ -12,6 +12,9 @@ export interface ThreadProgress {
 
 export type RunInThread = <N extends TaskName>(name: N, input: TaskInput<N>, options?: { signal?: AbortSignal; onProgress?: (progress: ThreadProgress) => void }) => Promise<TaskOutput<N>>;
 
+/** First word of a thread that has taken a task up. */
+export const begunWord = 'begun';
+
 export interface ThreadPool {
   run: RunInThread;
   stop(): Promise<void>;
@@ -29,16 +32,28 @@ export const startThreads = (options: { threads?: number | undefined; file?: str
     maxThreads: options.threads ?? Math.max(1, availableParallelism() - 1),
     idleTimeout: 60_000,
   });
-  // A thread that dies rejects the task it had; without a listener it would take the process with it.
-  pool.on('error', () => undefined);
+  /** Calls that no thread has taken up yet. */
+  const waiting = new Set<AbortController>();
+  // A thread that dies rejects the task it had. One that cannot start has none: without this, calls would wait for it for ever.
+  pool.on('error', (fault: unknown) => {
+    for (const call of waiting) call.abort(new Error(`A worker thread could not start: ${fault instanceof Error ? fault.message : String(fault)}`));
+  });
   return {
     run: async (name, input, { signal, onProgress } = {}) => {
       const { port1, port2 } = new MessageChannel();
-      port1.on('message', (progress: ThreadProgress) => onProgress?.(progress));
+      const start = new AbortController();
+      waiting.add(start);
+      port1.on('message', (message: ThreadProgress | typeof begunWord) => {
+        if (message === begunWord) waiting.delete(start);
+        else onProgress?.(message);
+      });
       port1.unref();
       try {
-        return await pool.run({ name, input, port: port2 }, { transferList: [port2], ...(signal ? { signal } : {}) });
+        return await pool.run({ name, input, port: port2 }, { transferList: [port2], signal: signal ? AbortSignal.any([signal, start.signal]) : start.signal });
+      } catch (fault) {
+        throw start.signal.aborted && !signal?.aborted ? start.signal.reason : fault;
       } finally {
+        waiting.delete(start);
         port1.close();
       }
     },
