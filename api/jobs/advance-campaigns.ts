@@ -1,3 +1,4 @@
+import { registryWork } from '#api/lib/work-of.ts';
 import { advanceCampaigns } from '#api/modules/campaigns/advance.ts';
 import { defineJob } from './define-job.ts';
 
@@ -5,5 +6,5 @@ import { defineJob } from './define-job.ts';
 export const advanceCampaignsJob = defineJob({
   name: 'advance-campaigns',
   schedule: '* * * * *',
-  handle: async ({ em, deps, runInThread }) => advanceCampaigns({ em, clock: deps.clock, queue: deps.queue, runInThread, caller: null }),
+  handle: async ({ em, deps, runInThread }) => advanceCampaigns(registryWork(em, deps, runInThread)),
 });
