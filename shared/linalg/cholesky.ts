@@ -41,6 +41,21 @@ export class Cholesky {
     return new Cholesky(n, store);
   }
 
+  /** Rows of the lower triangle end to end, n(n + 1)/2 numbers: all that has to be kept. */
+  packed(): Float64Array {
+    const { n } = this;
+    const out = new Float64Array((n * (n + 1)) / 2);
+    for (let i = 0, at = 0; i < n; at += ++i) out.set(this.store.matrix.subarray(i * n, i * n + i + 1), at);
+    return out;
+  }
+
+  /** The factor that was packed. */
+  static unpack(packed: Float64Array, n: number): Cholesky {
+    const store = new PanelStore(2 * n * n, 2 * n);
+    for (let i = 0, at = 0; i < n; at += ++i) store.matrix.set(packed.subarray(at, at + i + 1), i * n);
+    return new Cholesky(n, store);
+  }
+
   /** Overwrites each of `groups` groups (n×4 interleaved, one after another) by the solution of A·x = b. */
   solve(x: Float64Array, groups: number): void {
     const size = 4 * this.n;

@@ -21,7 +21,7 @@ export function estimateChained(input: EstimateInput, method: MethodVersion): Es
   const count = input.replicates ?? DEFAULT_REPLICATES;
   const sealed = new Set(input.seal?.sealed ?? []);
   onProgress?.({ stage: 'design', fraction: 0 });
-  const chain = estimateChain({ gates: dataset.gates, contentId, method, sealed, count, onProgress: (fraction) => onProgress?.({ stage: 'replicates', fraction, replicatesDone: Math.floor(fraction * count) }) }, dataset);
+  const chain = estimateChain({ gates: dataset.gates, contentId, method, sealed, factors: input.factors ?? null, count, onProgress: (fraction) => onProgress?.({ stage: 'replicates', fraction, replicatesDone: Math.floor(fraction * count) }) }, dataset);
   onProgress?.({ stage: 'replicates', fraction: 1, replicatesDone: count });
   const maps = registerMaps(dataset.gates, new Map(chain.locals.map((l) => [l.qubit, l])), chain.pairs);
   const gates = readGateFigures(chain, count);

@@ -9,6 +9,18 @@ export interface Gauge {
   basis: Float64Array;
 }
 
+/** A gauge whose dimension is known already: its directions are worked out when somebody asks for them. */
+export function gaugeOfDimension(set: GateSet, layout: Layout, dimension: number): Gauge {
+  let found: Gauge | null = null;
+  return {
+    dimension,
+    get basis() {
+      found ??= gaugeDirections(set, layout);
+      return found.basis;
+    },
+  };
+}
+
 /**
  * Gauge columns: for each elementary K with zero first row, E_k = K − G_k K G_kᵀ, δρ = Kρ, δM = −KᵀM. Their span may be
  * smaller than D(D − 1): a K that commutes with all gates and leaves the SPAM alone changes nothing.

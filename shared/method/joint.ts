@@ -25,7 +25,7 @@ export function estimateJoint(input: EstimateInput, method: MethodVersion): Esti
   const patch = dataset.patches[0]!;
   const sealedIds = new Set(input.seal?.sealed ?? []);
   const set = idealGateSet(dataset.gates, patch.qubits);
-  const problem = poseProblem(set, patch.circuits.filter((c) => !sealedIds.has(c.id)), onProgress);
+  const problem = poseProblem(set, patch.circuits.filter((c) => !sealedIds.has(c.id)), onProgress, undefined, input.factors ?? null);
   const sealedCircuits = patch.circuits.filter((c) => sealedIds.has(c.id));
   onProgress?.({ stage: 'passes', fraction: 0 });
   const passes = runPasses(problem, problem.observed, method.passes);

@@ -3,7 +3,9 @@ import { SOUND_RATIO } from '#shared/linalg/tolerances.ts';
 import { designMatrix } from '#shared/method/design.ts';
 import { gaugeDirections } from '#shared/method/gauge.ts';
 import { idealGateSet, indexCircuits } from '#shared/method/gate-set.ts';
-import { fastInverse, invertDesign } from '#shared/method/inverse.ts';
+import type { FactorStore } from '#shared/method/factors.ts';
+import { fastInverse } from '#shared/method/fast-inverse.ts';
+import { keptInverse, keptJudgement } from '#shared/method/kept-inverse.ts';
 import { layoutOf } from '#shared/method/parameters.ts';
 
 export interface DesignInput {
@@ -32,16 +34,19 @@ function prepare({ gates, qubits, circuits, pairOfChain }: DesignInput) {
   const set = idealGateSet(gates, qubits);
   const both = new Set(set.labels.flatMap((label, k) => ((gates.find((g) => g.label === label)?.targets.length ?? 0) > 1 ? [k] : [])));
   const layout = layoutOf(set, pairOfChain ? both : undefined);
-  return { layout, design: designMatrix(set, layout, indexCircuits(set, circuits)), gauge: gaugeDirections(set, layout) };
+  const indexed = indexCircuits(set, circuits);
+  return { set, layout, circuits: indexed, design: () => designMatrix(set, layout, indexed) };
 }
 
 /** What a set of circuits can determine, before a shot is taken (method M1, rank and soundness). One qubit: milliseconds; a sound pair: about a second; a deficient pair: a minute. */
-export function judgeDesign(input: DesignInput): DesignJudgement {
-  const { layout, design, gauge } = prepare(input);
-  const { rank, conditionRatio, rankAmbiguous } = invertDesign(design, gauge);
-  const full = layout.columns - gauge.dimension;
+export function judgeDesign(input: DesignInput, factors: FactorStore | null = null): DesignJudgement {
+  const posed = prepare(input);
+  const { layout } = posed;
+  const judged = input.pairOfChain ? { gauge: { dimension: 0 }, inverse: keptJudgement(posed, factors) } : keptInverse(posed, factors);
+  const { rank, conditionRatio, rankAmbiguous } = judged.inverse;
+  const full = layout.columns - judged.gauge.dimension;
   return {
-    columns: layout.columns, gaugeDimension: gauge.dimension, rank, conditionRatio, rankAmbiguous, complete: rank === full,
+    columns: layout.columns, gaugeDimension: judged.gauge.dimension, rank, conditionRatio, rankAmbiguous, complete: rank === full,
     sound: (expectedRank = full) => rank === expectedRank && !rankAmbiguous && conditionRatio >= SOUND_RATIO,
   };
 }
@@ -51,7 +56,7 @@ export function judgeDesign(input: DesignInput): DesignJudgement {
  * pairs, where most draws may fail. Agrees with `judgeDesign(…).sound(columns − gaugeDimension)`.
  */
 export function isCompleteAndSound(input: DesignInput): boolean {
-  const { design, gauge } = prepare(input);
-  const inverse = fastInverse(design, gauge);
+  const { set, layout, design } = prepare(input);
+  const inverse = fastInverse(design(), gaugeDirections(set, layout));
   return inverse !== null && inverse.conditionRatio >= SOUND_RATIO;
 }

@@ -3,9 +3,11 @@ import type { SparseRows } from '#shared/linalg/sparse.ts';
 import { designMatrix } from '#shared/method/design.ts';
 import { Evaluator } from '#shared/method/evaluator.ts';
 import { frequenciesOf, withoutLast, type Frequencies } from '#shared/method/frequencies.ts';
-import { gaugeDirections, type Gauge } from '#shared/method/gauge.ts';
+import type { FactorStore } from '#shared/method/factors.ts';
+import type { Gauge } from '#shared/method/gauge.ts';
 import { indexCircuits, type GateSet } from '#shared/method/gate-set.ts';
-import { invertDesign, type Inverse } from '#shared/method/inverse.ts';
+import type { Inverse } from '#shared/method/inverse.ts';
+import { keptInverse } from '#shared/method/kept-inverse.ts';
 import { layoutOf, type Layout } from '#shared/method/parameters.ts';
 import type { EstimateProgress } from '#shared/method/types.ts';
 
@@ -27,15 +29,17 @@ export interface PatchProblem {
   longest: number;
 }
 
-/** @param layout which parameters are estimated: all of the set unless told */
-export function poseProblem(set: GateSet, circuits: readonly DatasetCircuit[], onProgress?: (p: EstimateProgress) => void, layout: Layout = layoutOf(set)): PatchProblem {
+/**
+ * @param layout which parameters are estimated: all of the set unless told
+ * @param factors where the factor of the design may be kept
+ */
+export function poseProblem(set: GateSet, circuits: readonly DatasetCircuit[], onProgress?: (p: EstimateProgress) => void, layout: Layout = layoutOf(set), factors: FactorStore | null = null): PatchProblem {
   const indexed = indexCircuits(set, circuits);
   const counts = frequenciesOf(circuits, set.n);
   onProgress?.({ stage: 'design', fraction: 0 });
   const design = designMatrix(set, layout, indexed);
-  const gauge = gaugeDirections(set, layout);
   onProgress?.({ stage: 'inverse', fraction: 0 });
-  const inverse = invertDesign(design, gauge);
+  const { gauge, inverse } = keptInverse({ set, layout, circuits: indexed, design: () => design }, factors);
   return {
     set, layout, circuits: indexed, counts, design, gauge, inverse,
     observed: withoutLast(counts.observed, counts.circuits, counts.d),

@@ -1,4 +1,5 @@
 import type { CircuitsFile, Dataset, GateClass, Result, Seal } from '#shared/formats/types.ts';
+import type { FactorStore } from '#shared/method/factors.ts';
 
 export interface EstimateInput {
   /** A dataset that has passed the schema and the semantic checks. */
@@ -13,6 +14,8 @@ export interface EstimateInput {
   seal?: Seal | null;
   /** Circuits whose outcomes are to be predicted. */
   predict?: CircuitsFile | null;
+  /** Where factors of designs are kept: they save time and change no bit. */
+  factors?: FactorStore | null;
   /** Bootstrap replicates; 2,000 unless told. */
   replicates?: number;
   /** Called now and then with a stage and the share done, 0 to 1; the method's result never depends on it. */

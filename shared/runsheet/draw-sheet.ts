@@ -1,11 +1,12 @@
 import { AppError } from '#shared/errors/app-error.ts';
 import type { GateClass, RunSheet, SheetCircuit } from '#shared/formats/types.ts';
+import type { FactorStore } from '#shared/method/factors.ts';
 import { judgeDesign } from '#shared/method/judge-design.ts';
 import type { Xoshiro256 } from '#shared/random/xoshiro256.ts';
 import { sheetStream } from '#shared/runsheet/draw-circuits.ts';
 import { canBeSound, drawPatch, isSound, unsealed } from '#shared/runsheet/draw-patch.ts';
 import { commitmentOf } from '#shared/runsheet/seal.ts';
-import { patchPlans, type PatchPlan } from '#shared/runsheet/sheet-plan.ts';
+import { patchPlans, type PatchPlan, type SheetKind } from '#shared/runsheet/sheet-plan.ts';
 
 export interface DrawRequest {
   gateClass: GateClass;
@@ -16,10 +17,14 @@ export interface DrawRequest {
   shots: number;
   /** 1 to 32 bytes, lower-case hex. */
   seed: string;
+  /** How circuits are drawn; random unless told. */
+  kind?: SheetKind;
   /** Number and device of the sheet; null = an offline sheet. */
   issued: { id: string; device: { provider: string; name: string }; drawnAt: string } | null;
   /** Gives 32 fresh random bytes for each draw; null = nothing is sealed. Independent of the seed. */
   newSecret: (() => Uint8Array) | null;
+  /** Where the factors of the sheet's designs are kept for its first estimate. */
+  factors?: FactorStore | null;
   onProgress?: (progress: DrawProgress) => void;
 }
 
@@ -77,10 +82,10 @@ function sheetOf({ gateClass, register, shots, seed, issued }: DrawRequest, { pl
   };
 }
 
-function designsOf(gateClass: GateClass, { plans, circuits, secret }: Draw): DrawnSheet['designs'] {
+function designsOf({ gateClass, factors = null }: DrawRequest, { plans, circuits, secret }: Draw): DrawnSheet['designs'] {
   return plans.flatMap((plan, p) => {
     if (plan.judged === null) return [];
-    const { rank, conditionRatio } = judgeDesign({ gates: gateClass.gates, qubits: plan.qubits, circuits: unsealed(plan, circuits[p] ?? [], secret), pairOfChain: plan.judged === 'pair-of-chain' });
+    const { rank, conditionRatio } = judgeDesign({ gates: gateClass.gates, qubits: plan.qubits, circuits: unsealed(plan, circuits[p] ?? [], secret), pairOfChain: plan.judged === 'pair-of-chain' }, factors);
     return [{ qubits: plan.qubits, rank, conditionRatio }];
   });
 }
@@ -100,7 +105,7 @@ export function drawSheet(request: DrawRequest): DrawnSheet {
   let circuits = asked;
   for (let raised = 0; tried <= raises; raised++) {
     circuits = Math.ceil((asked * (10 + raised)) / 10);
-    const plans = patchPlans(gateClass, circuits, request.newSecret !== null);
+    const plans = patchPlans(gateClass, circuits, request.newSecret !== null, request.kind);
     if (!plans.every(canBeSound)) continue;
     tried++;
     const most = raised === 0 ? drawsAsked : drawsRaised;
@@ -108,7 +113,7 @@ export function drawSheet(request: DrawRequest): DrawnSheet {
       request.onProgress?.({ draws, circuits, fraction: i / most });
       draws++;
       const draw = drawOnce(request, plans, generator);
-      if (draw) return { sheet: sheetOf(request, draw), secret: draw.secret, circuits, draws, designs: designsOf(gateClass, draw) };
+      if (draw) return { sheet: sheetOf(request, draw), secret: draw.secret, circuits, draws, designs: designsOf(request, draw) };
     }
   }
   throw new AppError('design-unsound', `No sound sheet was found for "${gateClass.id}" with ${asked} circuits to estimate from, nor with more, up to ${circuits}.`);

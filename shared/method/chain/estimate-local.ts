@@ -1,4 +1,5 @@
 import type { DatasetPatch, GateDeclaration, Misfit } from '#shared/formats/types.ts';
+import type { FactorStore } from '#shared/method/factors.ts';
 import { tabulate, type MapTable } from '#shared/method/chain/map-table.ts';
 import { MISFIT_DRAWS } from '#shared/method/constants.ts';
 import { idealGateSet } from '#shared/method/gate-set.ts';
@@ -33,6 +34,7 @@ export interface ChainContext {
   contentId: string;
   method: MethodVersion;
   sealed: ReadonlySet<string>;
+  factors: FactorStore | null;
   /** Replicates that figures are read from. */
   count: number;
   onProgress?: (fraction: number) => void;

@@ -6,7 +6,7 @@ import { ESTIMATE, REPLICATES, tabulate, type MapTable } from '#shared/method/ch
 import { MISFIT_DRAWS } from '#shared/method/constants.ts';
 import { designMatrix } from '#shared/method/design.ts';
 import { idealGateSet, indexCircuits, type GateSet } from '#shared/method/gate-set.ts';
-import { invertDesign, type Inverse } from '#shared/method/inverse.ts';
+import { keptJudgement, type Judgement } from '#shared/method/kept-inverse.ts';
 import { misfitOf } from '#shared/method/misfit.ts';
 import { applyParameters, emptyMaps, layoutOf, type Layout } from '#shared/method/parameters.ts';
 import { runPasses, type Passes } from '#shared/method/passes.ts';
@@ -31,7 +31,7 @@ export interface PairEstimate {
   set: GateSet;
   layout: Layout;
   /** At the ideal local gates, preparation and effects: only there can a deficient design be told. */
-  judged: Pick<Inverse, 'rank' | 'rankAmbiguous' | 'conditionRatio' | 'spectrum'>;
+  judged: Judgement;
   sound: boolean;
   longest: number;
   /** Null where the pair is unsound or stands on nothing: the passes would run away. */
@@ -78,8 +78,8 @@ export function estimatePair(context: ChainContext, source: DatasetPatch, patch:
   const circuits = source.circuits.filter((c) => !context.sealed.has(c.id));
   const layout = layoutOf(set, both);
   const indexed = indexCircuits(set, circuits);
-  const { rank, rankAmbiguous, conditionRatio, spectrum } = invertDesign(designMatrix(set, layout, indexed), { dimension: 0, basis: new Float64Array(0) });
-  const judged = { rank, rankAmbiguous, conditionRatio, spectrum };
+  const judged = keptJudgement({ set, layout, circuits: indexed, design: () => designMatrix(set, layout, indexed) }, context.factors);
+  const { rank, rankAmbiguous, conditionRatio } = judged;
   const sound = rank === layout.columns && !rankAmbiguous && conditionRatio >= SOUND_RATIO;
   const against = reasonAgainst(locals, judged, layout.columns, sound);
   const base = new LocalBase(set, [locals[0].table, locals[1].table], local);

@@ -8,7 +8,8 @@ import { isCompleteAndSound, judgeDesign } from '#shared/method/judge-design.ts'
 import { designMatrix } from '#shared/method/design.ts';
 import { gaugeDirections } from '#shared/method/gauge.ts';
 import { idealGateSet, indexCircuits } from '#shared/method/gate-set.ts';
-import { fastInverse, svdInverse } from '#shared/method/inverse.ts';
+import { fastInverse } from '#shared/method/fast-inverse.ts';
+import { svdInverse } from '#shared/method/inverse.ts';
 import { layoutOf } from '#shared/method/parameters.ts';
 import { drawCircuits, one, pairGates, QUARTER, seeded } from '#tests/shared/method/made.ts';
 
