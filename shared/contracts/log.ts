@@ -49,8 +49,13 @@ export const logLeafItem = z.object({ index: z.number().int(), hash: sha256, lea
 export const logLeafQuery = pageQuery.extend({ order: z.enum(['oldest', 'newest']).default('oldest') });
 export const logLeafList = z.object({ items: z.array(logLeafItem), nextCursor: z.string().nullable() });
 
+/** GET /api/v1/log/growth : leaves of each month, and the size of the log at its end. */
+export const logGrowth = z.object({ months: z.array(z.object({ month: z.string(), leaves: z.number().int(), size: z.number().int() })) });
+
 export type LogLeaf = z.infer<typeof logLeaf>;
 export type LogHead = z.infer<typeof logHead>;
 export type LogProof = z.infer<typeof logProof>;
 export type LogConsistency = z.infer<typeof logConsistency>;
+export type LogGrowth = z.infer<typeof logGrowth>;
+export type LogLeafList = z.infer<typeof logLeafList>;
 export type LogLeafItem = z.infer<typeof logLeafItem>;

@@ -1,7 +1,7 @@
 import { z } from 'zod';
-import { logConsistency, logConsistencyQuery, logHead, logHeadQuery, logLeafList, logLeafQuery, logProof, logProofQuery } from '#shared/contracts/log.ts';
+import { logConsistency, logConsistencyQuery, logGrowth, logHead, logHeadQuery, logLeafList, logLeafQuery, logProof, logProofQuery } from '#shared/contracts/log.ts';
 import { defineRoute, type Route } from '#api/lib/define-route.ts';
-import { listLeaves, readConsistency, readHead, readProof } from './service.ts';
+import { listLeaves, readConsistency, readGrowth, readHead, readProof } from './service.ts';
 
 export const logRoutes: Route[] = [
   defineRoute({
@@ -30,6 +30,14 @@ export const logRoutes: Route[] = [
     query: logLeafQuery,
     response: logLeafList,
     handler: async ({ em, query }) => listLeaves(em, query.order, query.limit, query.cursor),
+  }),
+  defineRoute({
+    method: 'get',
+    path: '/api/v1/log/growth',
+    action: 'public.read',
+    summary: 'How the log grew, month by month (UTC).',
+    response: logGrowth,
+    handler: async ({ em }) => readGrowth(em),
   }),
   defineRoute({
     method: 'get',

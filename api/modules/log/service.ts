@@ -1,5 +1,5 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
-import { logLeaf, type LogConsistency, type LogHead, type LogLeaf, type LogLeafItem, type LogProof } from '#shared/contracts/log.ts';
+import { logLeaf, type LogConsistency, type LogGrowth, type LogHead, type LogLeaf, type LogLeafItem, type LogProof } from '#shared/contracts/log.ts';
 import { versionedAccessionOf } from '#shared/domain/ids.ts';
 import { AppError } from '#shared/errors/app-error.ts';
 import { consistencySpans, inclusionSpans } from '#shared/merkle/tree.ts';
@@ -63,3 +63,10 @@ export const listLeaves = async (em: EntityManager, order: 'oldest' | 'newest', 
   const rows = await runSql<LeafRow>(em, order === 'oldest' ? 'select index, hash, data from log_leaf where index > $1 order by index limit $2' : 'select index, hash, data from log_leaf where index < $1 order by index desc limit $2', [place, limit + 1]);
   return pageFrom(rows, limit, (row) => [String(row.index)], (row) => ({ index: row.index, hash: row.hash, leaf: readLeaf(row) }));
 };
+
+/** Leaves of each month with any, and the size of the log at its end. */
+export const readGrowth = async (em: EntityManager): Promise<LogGrowth> => ({
+  months: await runSql<LogGrowth['months'][number]>(em, `
+    select month, leaves, (sum(leaves) over (order by month))::int as size
+      from (select to_char(at at time zone 'UTC', 'YYYY-MM') as month, count(*)::int as leaves from log_leaf group by 1) m order by month`),
+});

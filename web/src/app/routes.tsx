@@ -27,6 +27,7 @@ export const routesOf = (queryClient: QueryClient): RouteObject[] => {
             { path: 'devices', lazy: page(() => import('./routes/devices.tsx')) },
             { path: 'devices/:id', lazy: page(() => import('./routes/device.tsx')) },
             { path: 'method', lazy: page(() => import('./routes/method.tsx')) },
+            { path: 'log', lazy: page(() => import('./routes/log.tsx')) },
             { path: 'schema', lazy: page(() => import('./routes/schema.tsx')) },
             { path: 'problems/:code', lazy: page(() => import('./routes/problem.tsx')) },
             ...deskRoutes(page),

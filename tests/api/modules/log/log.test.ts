@@ -72,6 +72,11 @@ describe('the log', () => {
     }
   });
 
+  it('counts its growth by month, ending at its size', async () => {
+    const { months } = (await get('/api/v1/log/growth')) as { months: unknown[] };
+    expect(months).toEqual([{ month: '2026-05', leaves: names.length, size: names.length }]);
+  });
+
   it('refuses sizes that it never had, with the value, and leaves that are not there', async () => {
     const { treeSize } = await head();
     for (const [query, told] of [[`first=3&second=${treeSize + 1}`, String(treeSize + 1)], ['first=4&second=2', '4 is more than second, 2'], ['first=0&second=2', 'first']] as const) {

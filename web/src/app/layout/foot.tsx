@@ -10,6 +10,7 @@ export function Foot() {
           <ul>
             <li><Link to="/method">Method M1</Link></li>
             <li><Link to="/schema">Schema</Link></li>
+            <li><Link to="/log">Log</Link></li>
           </ul>
           <ThemeChoice />
         </div>
