@@ -1,3 +1,4 @@
+import { rankRanges, type RankEntry } from '#shared/stats/rank-ranges.ts';
 import { checkDataset, type CheckDatasetInput } from './tasks/check-dataset.ts';
 import { drawRunSheetTask, type DrawSheetInput } from './tasks/draw-sheet.ts';
 import { estimateDataset, type EstimateDatasetInput } from './tasks/estimate-dataset.ts';
@@ -27,6 +28,8 @@ export const threadTasks = {
   'check-dataset': async (input: CheckDatasetInput) => checkDataset(input),
   /** The official estimate with the review's diagnostics. */
   'estimate-dataset': async (input: EstimateDatasetInput, report: Report) => estimateDataset(input, report),
+  /** Rank ranges of a board with many entries. */
+  'rank-ranges': async (input: { entries: RankEntry[]; better: 'higher' | 'lower'; level: number }) => rankRanges(input.entries, input.better, input.level),
 };
 
 type Tasks = typeof threadTasks;

@@ -1,7 +1,7 @@
 import type { BoardFigure } from '#shared/contracts/boards.ts';
 import type { Figure, FigureKey } from '#shared/formats/types.ts';
 
-interface Reading {
+export interface Reading {
   key: FigureKey;
   depth: number | null;
   /** Which way is better. */
