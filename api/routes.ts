@@ -7,6 +7,7 @@ import { gateClassRoutes } from './modules/gate-classes/routes.ts';
 import { healthRoutes } from './modules/health/routes.ts';
 import { logRoutes } from './modules/log/routes.ts';
 import { methodRoutes } from './modules/methods/routes.ts';
+import { officeRoutes } from './modules/office/routes.ts';
 import { reviewRoutes } from './modules/reviews/routes.ts';
 import { runSheetRoutes } from './modules/run-sheets/routes.ts';
 import { sessionRoutes } from './modules/session/routes.ts';
@@ -15,5 +16,5 @@ import { tokenRoutes } from './modules/tokens/routes.ts';
 
 /** Every route of the API. A route that is not in this list does not exist; one in it has a rule. */
 export const routes: readonly Route[] = [
-  ...healthRoutes, ...sessionRoutes, ...gateClassRoutes, ...boardRoutes, ...entryRoutes, ...deviceRoutes, ...runSheetRoutes, ...submissionRoutes, ...reviewRoutes, ...tokenRoutes, ...logRoutes, ...methodRoutes, ...campaignRoutes,
+  ...healthRoutes, ...sessionRoutes, ...gateClassRoutes, ...boardRoutes, ...entryRoutes, ...deviceRoutes, ...runSheetRoutes, ...submissionRoutes, ...reviewRoutes, ...tokenRoutes, ...logRoutes, ...methodRoutes, ...campaignRoutes, ...officeRoutes,
 ];
