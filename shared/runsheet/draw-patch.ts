@@ -1,13 +1,14 @@
 import type { GateDeclaration, SheetCircuit } from '#shared/formats/types.ts';
 import { isCompleteAndSound, judgeDesign } from '#shared/method/judge-design.ts';
 import type { Xoshiro256 } from '#shared/random/xoshiro256.ts';
-import { drawCircuits } from '#shared/runsheet/draw-circuits.ts';
+import { drawCircuits, drawStructured } from '#shared/runsheet/draw-circuits.ts';
 import { sealedIds } from '#shared/runsheet/seal.ts';
 import type { PatchPlan } from '#shared/runsheet/sheet-plan.ts';
 
 /** Circuits of one patch with ids that count on from `first`; all ids of a sheet have one width. */
 export function drawPatch(generator: Xoshiro256, plan: PatchPlan, first: number, width: number): SheetCircuit[] {
-  const drawn = drawCircuits(generator, plan.estimated + plan.sealed, plan.lengths, plan.labels);
+  const count = plan.estimated + plan.sealed;
+  const drawn = plan.structure ? drawStructured(generator, count, plan.structure) : drawCircuits(generator, count, plan.lengths, plan.labels);
   return drawn.map((gates, i) => ({ id: `c${String(first + i).padStart(width, '0')}`, gates }));
 }
 
