@@ -43,6 +43,7 @@ export const launcherSchema = environmentSchema
     DATABASE_URL: environmentSchema.shape.DATABASE_URL.optional(),
     SESSION_SECRET: environmentSchema.shape.SESSION_SECRET.optional(),
     LOG_SIGNING_KEY: environmentSchema.shape.LOG_SIGNING_KEY.optional(),
+    LOG_OLDER_KEYS: z.string().transform((text) => text.split(',').map((key) => key.trim()).filter(Boolean)).optional(),
     GOOGLE_CLIENT_ID: z.string().optional(),
     GOOGLE_CLIENT_SECRET: z.string().optional(),
     SMTP_URL: environmentSchema.shape.SMTP_URL.optional(),

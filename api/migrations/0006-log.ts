@@ -3,7 +3,7 @@ import { freezeTable } from './freeze-table.ts';
 
 const hash = (column: string): string => `${column} text not null check (${column} ~ '^[0-9a-f]{64}$')`;
 
-/** The log: a Merkle tree with a leaf for every freezing and withdrawal, its full subtrees, and its signed heads. */
+/** The log: a Merkle tree with a leaf for every freezing and withdrawal, its full subtrees, its signed heads, and a signature over each version's own row. */
 export class Migration0006Log extends Migration {
   override up(): void {
     const statements = [
@@ -29,6 +29,10 @@ end $$`,
       `create table log_head (
         tree_size int primary key check (tree_size > 0), ${hash('root_hash')}, at timestamptz(3) not null, signature text not null, key_id text not null, public_key text not null)`,
       ...freezeTable('log_head'),
+      `create table record_signature (
+        accession text not null, version int not null, signature text not null, key_id text not null, public_key text not null,
+        primary key (accession, version), foreign key (accession, version) references entry_version (accession, version))`,
+      ...freezeTable('record_signature'),
       // Nothing becomes public, and nothing is withdrawn, without its leaf in the same transaction.
       `create function require_leaf() returns trigger language plpgsql set search_path = pg_catalog, public, pg_temp as $$
 begin

@@ -21,7 +21,7 @@ export interface RunningCluster {
   stop(): Promise<void>;
 }
 
-const dataOf = (plan: ClusterPlan): string => join(plan.folder, 'data');
+const dataOf = (plan: Pick<ClusterPlan, 'folder'>): string => join(plan.folder, 'data');
 
 export const clusterExists = (plan: ClusterPlan): boolean => existsSync(join(dataOf(plan), 'PG_VERSION'));
 
@@ -46,7 +46,7 @@ export const createCluster = async (plan: ClusterPlan): Promise<void> => {
 };
 
 /** The process that a postmaster.pid names, if it is alive and serves this data folder. */
-const livePostmaster = (plan: ClusterPlan): number | null => {
+const livePostmaster = (plan: Pick<ClusterPlan, 'folder'>): number | null => {
   const file = join(dataOf(plan), 'postmaster.pid');
   if (!existsSync(file)) return null;
   const pid = Number(readFileSync(file, 'utf8').split('\n')[0]);
@@ -56,6 +56,14 @@ const livePostmaster = (plan: ClusterPlan): number | null => {
   } catch {
     return null;
   }
+};
+
+/** The port of a server that is already running on this cluster, for reading along; null where none is. */
+export const portOfRunning = (plan: Pick<ClusterPlan, 'folder'>): number | null => {
+  if (livePostmaster(plan) === null) return null;
+  // The fourth line of postmaster.pid, by PostgreSQL's own convention.
+  const port = Number(readFileSync(join(dataOf(plan), 'postmaster.pid'), 'utf8').split('\n')[3]);
+  return Number.isInteger(port) && port > 0 ? port : null;
 };
 
 const stop = (plan: ClusterPlan): Promise<string> => runAsServer(join(plan.bin, 'pg_ctl'), ['stop', '--pgdata', dataOf(plan), '--mode', 'fast', '--wait', '--timeout', '60']);

@@ -1,7 +1,7 @@
 import { join } from 'node:path';
 import pg from 'pg';
 import type { LauncherEnvironment } from '#api/config/environment.ts';
-import { clusterExists, createCluster, startCluster } from '../postgres/cluster.ts';
+import { clusterExists, createCluster, portOfRunning, startCluster } from '../postgres/cluster.ts';
 import { providePostgres } from '../postgres/install.ts';
 import { reachableFolder } from '../postgres/reachable-folder.ts';
 import { addressOf, applicationRole, ensureRolesAndDatabase, ownerRole } from '../postgres/roles.ts';
@@ -55,4 +55,11 @@ export const startDatabase = async (settings: LauncherEnvironment, dataDir: stri
     own: true,
     stop: cluster.stop,
   };
+};
+
+/** As `startDatabase`, but a registry that runs in this folder is left running, and its database is read along. */
+export const reachDatabase = async (settings: LauncherEnvironment, dataDir: string, secrets: Secrets, say: (line: string) => void): Promise<StartedDatabase> => {
+  const port = settings.DATABASE_URL ? null : portOfRunning({ folder: join(reachableFolder(dataDir), 'postgres') });
+  if (port === null) return startDatabase(settings, dataDir, secrets, say);
+  return { url: addressOf(applicationRole, secrets.application, port, database), ownerUrl: addressOf(ownerRole, secrets.owner, port, database), own: true, stop: async () => undefined };
 };

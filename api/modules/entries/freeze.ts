@@ -11,6 +11,7 @@ import { recordAudit } from '#api/lib/audit.ts';
 import { runSql } from '#api/lib/run-sql.ts';
 import { inTransaction, type Work } from '#api/lib/work.ts';
 import { logEvent } from '#api/modules/log/append.ts';
+import { signRecord } from '#api/modules/log/record-signature.ts';
 import { readSheetSeal } from '#api/modules/run-sheets/sheet-store.ts';
 import { embargo, freeze, lift, lockSubmission, supersede } from '#api/modules/submissions/life-cycle.ts';
 import { presentMessage } from '#api/modules/submissions/presenter.ts';
@@ -106,6 +107,7 @@ export const freezeSubmission = async (work: Work, submission: Submission, decis
   await em.flush();
   await copyBytes(work, name, file, estimate);
   if (runSheetId !== null) await copySeal(work, name, runSheetId);
+  await signRecord(work, name);
   em.assign(submission, name);
   const kept = Boolean(submission.embargoUntil && submission.embargoUntil > dayOf(now));
   addState(work, name, kept ? 'embargoed' : 'frozen');

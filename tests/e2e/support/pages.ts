@@ -27,6 +27,7 @@ const publicPages: readonly PageToVisit[] = [
   fixed('devices', '/devices'),
   { name: 'device', path: (found) => `/devices/${found.device}` },
   fixed('method', '/method'),
+  fixed('log', '/log'),
   fixed('schema', '/schema'),
   fixed('find', '/find?q=a'),
   fixed('find-nothing', '/find?q=nothing-of-that-name'),

@@ -30,7 +30,7 @@ const as = async (url: string, sql: string): Promise<unknown[]> => {
 const recordTables: [table: string, column: string][] = [
   ['device', 'name'], ['run_sheet_file', 'bytes'], ['run_sheet_secret', 'seal'], ['submission_file', 'bytes'], ['submission_estimate', 'result'], ['submission_move', 'state'], ['submission_message', 'body'],
   ['decision', 'reason'], ['entry', 'gate_class'], ['entry_version', 'summary'], ['entry_bytes', 'bytes'], ['entry_state', 'state'],
-  ['log_leaf', 'hash'], ['log_node', 'hash'], ['log_head', 'root_hash'],
+  ['log_leaf', 'hash'], ['log_node', 'hash'], ['log_head', 'root_hash'], ['record_signature', 'signature'],
 ];
 
 describe('what is frozen', () => {
