@@ -45,7 +45,7 @@ function signalGradient(problem: Determining, circuits: readonly Int32Array[]): 
  * Angle error to first order: Im tr(Π E)/m, Π the projector on the eigenspace of μ (dimension m), formed from the other
  * distinct eigenvalues ν as the product of (G − ν)/(μ − ν). Null where the gate turns nothing.
  */
-function angleGradient(problem: Determining, k: number): Float64Array | null {
+export function angleGradient(problem: Pick<Determining, 'set' | 'layout'>, k: number): Float64Array | null {
   const { D, gates } = problem.set;
   const spectrum = new GateLoss(gates[k]!, D).turningSpectrum();
   if (!spectrum) return null;
