@@ -1,21 +1,34 @@
 import type { Entry } from '#shared/contracts/entries.ts';
 import { Section } from '#web/components/section.tsx';
+import { RecomputeRun } from './recompute-run.tsx';
 
-/** How anyone can make the same figures from the same file. */
+/** About how long it takes, as measured in Chromium on two cores. */
+const lasts = (qubits: number): string => (qubits === 1 ? 'It takes a few seconds.' : 'It takes up to a minute and some hundred megabytes of memory.');
+
+/** How anyone can make the same figures from the same file: in this browser, or by a command. */
 export function RecomputeSection({ entry }: { entry: Entry }) {
+  const withdrawn = entry.state === 'withdrawn';
   const seal = entry.links.seal ? ' --seal seal.json' : '';
   return (
     <Section title="Recompute" aside="No account needed." id="recompute">
       <div className="cols2">
         <div className="flow">
-          <p className="prose">The estimate has no options and no starting point, and its random numbers follow from the content id. The same file gives the same figures, to the last digit, on any machine.</p>
-          <p className="prose">{entry.links.seal ? 'Fetch the dataset and the seal above and run the command on a checkout of the project.' : 'Fetch the dataset above and run the command on a checkout of the project.'} Compare what it prints with the result file.</p>
+          <p className="prose">{withdrawn
+            ? 'This version was withdrawn. Its data is not handed out, so that its figures cannot be made again; the command checks what is left: hashes and log proof.'
+            : `Your browser can run the same method on the same file and compare every figure, interval and digest with what was frozen. ${lasts(entry.register.length)} The estimate has no options, and its random numbers follow from the content id.`}</p>
         </div>
         <div className="flow">
-          <p className="tbl">From a checkout of the project:</p>
-          <pre className="cmd">{`npm run --silent estimate -- ${entry.provenance.fileName}${seal}`}</pre>
+          <p className="tbl">From a checkout of the project, every check at once:</p>
+          <pre className="cmd">{`npm run --silent verify -- \\\n  ${window.location.origin}${entry.links.page}`}</pre>
+          {withdrawn ? null : (
+            <>
+              <p className="tbl">The estimate alone, from the downloaded files:</p>
+              <pre className="cmd">{`npm run --silent estimate -- \\\n  ${entry.provenance.fileName}${seal}`}</pre>
+            </>
+          )}
         </div>
       </div>
+      {withdrawn ? null : <RecomputeRun key={entry.links.page} entry={entry} />}
     </Section>
   );
 }

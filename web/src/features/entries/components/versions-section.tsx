@@ -5,6 +5,7 @@ import { versionedAccessionOf } from '#shared/domain/ids.ts';
 import { AccessionLink } from '#web/components/accession-link.tsx';
 import { DataTable, type Column } from '#web/components/data-table.tsx';
 import { Section } from '#web/components/section.tsx';
+import { MethodResults } from './method-results.tsx';
 
 type Version = Entry['versions'][number];
 const stateWords: Readonly<Record<Version['state'], string>> = { frozen: 'Current', superseded: 'Superseded', withdrawn: 'Withdrawn' };
@@ -18,5 +19,10 @@ export function VersionsSection({ entry }: { entry: Entry }) {
     { id: 'headline', header: 'Retained signal, depth 16', numeric: true, cell: (v) => (v.headline ? `${figureValue(v.headline, decimals)} (${figureRange(v.headline, 0.95, decimals) ?? 'no interval'})` : 'Not determined') },
     { id: 'state', header: 'State', cell: (v) => `${stateWords[v.state]}${v.version === entry.version ? '; you are reading it' : ''}` },
   ];
-  return <Section title="Versions"><DataTable caption="Versions of this entry" captionHidden columns={columns} rows={entry.versions} rowKey={(v) => String(v.version)} tight /></Section>;
+  return (
+    <Section title="Versions">
+      <DataTable caption="Versions of this entry" captionHidden columns={columns} rows={entry.versions} rowKey={(v) => String(v.version)} tight />
+      <MethodResults accession={entry.accession} version={entry.version} />
+    </Section>
+  );
 }
