@@ -39,6 +39,7 @@ export function estimateChained(input: EstimateInput, method: MethodVersion): Es
       predictions: input.predict ? predictRegister(maps, register, count, input.predict.circuits) : [],
     },
     replicates: { figures: all.length, replicates: count, values: table },
+    probabilities: input.probabilitiesOf ? predictRegister(maps, register, 0, input.probabilitiesOf.circuits) : [],
   };
 }
 

@@ -53,8 +53,8 @@ export function packFactor(key: string, { columns, gaugeDimension, sigma1, sigma
 /** The factor, or null where the bytes are not those that were packed under this key for this many columns. */
 export function unpackFactor(key: string, bytes: Uint8Array, columns: number): DesignFactor | null {
   if (bytes.length < HEAD + DIGEST) return null;
-  // A copy stands at an address that doubles can be read from.
-  const own = bytes.slice();
+  // A copy stands at an address that doubles can be read from. (`slice` of a Buffer of Node's would be no copy.)
+  const own = new Uint8Array(bytes);
   const [storedColumns, gaugeDimension, order] = new Int32Array(own.buffer, 0, 4);
   if (storedColumns !== columns || (order !== 0 && order !== columns)) return null;
   const size = (order! * (order! + 1)) / 2;

@@ -12,7 +12,7 @@ import { blockingReason, intervalsWithheld, reportPatch, warningsOf } from '#sha
 import { poseProblem, type PatchProblem } from '#shared/method/patch-problem.ts';
 import { predict } from '#shared/method/predictions.ts';
 import { idealProbabilities, probabilitiesOf, Reader, ReadingCircuits } from '#shared/method/readings.ts';
-import { drawReplicates, type Replicates } from '#shared/method/replicates.ts';
+import { drawReplicates, NO_REPLICATES, type Replicates } from '#shared/method/replicates.ts';
 import { SealedReference } from '#shared/method/sealed-check.ts';
 import type { EstimateInput, EstimateOutput, ReplicateTable } from '#shared/method/types.ts';
 import type { MethodVersion } from '#shared/method/versions.ts';
@@ -58,7 +58,8 @@ export function estimateJoint(input: EstimateInput, method: MethodVersion): Esti
     predictions, warnings: warningsOf(problem, gateClass, passes, replicates, misfit),
   };
   onProgress?.({ stage: 'figures', fraction: 1 });
-  return { result, replicates: read.table };
+  const probabilities = input.probabilitiesOf ? predict(problem, passes, NO_REPLICATES, input.probabilitiesOf.circuits, { reason: blocked, withheld }) : [];
+  return { result, replicates: read.table, probabilities };
 }
 
 /** Prediction error: the distance between p̂ and what was counted on the sealed circuits. */

@@ -12,6 +12,9 @@ export interface Replicates {
   dropped: number;
 }
 
+/** For readings of the estimate alone. */
+export const NO_REPLICATES: Replicates = { count: 0, parameters: new Float64Array(0), finite: new Uint8Array(0), dropped: 0 };
+
 /** Sets the maps of replicate b from its parameters: in a pair of a chained register they stand on its locals' replicate b. */
 export type FillMaps = (b: number, e: Float64Array, maps: NoisyMaps) => void;
 

@@ -1,4 +1,4 @@
-import type { CircuitsFile, Dataset, GateClass, Result, Seal } from '#shared/formats/types.ts';
+import type { CircuitsFile, Dataset, GateClass, Prediction, Result, Seal } from '#shared/formats/types.ts';
 import type { FactorStore } from '#shared/method/factors.ts';
 
 export interface EstimateInput {
@@ -14,6 +14,8 @@ export interface EstimateInput {
   seal?: Seal | null;
   /** Circuits whose outcomes are to be predicted. */
   predict?: CircuitsFile | null;
+  /** Circuits whose outcome probabilities are wanted beside the result, without intervals and at the cost of one replicate. */
+  probabilitiesOf?: CircuitsFile | null;
   /** Where factors of designs are kept: they save time and change no bit. */
   factors?: FactorStore | null;
   /** Bootstrap replicates; 2,000 unless told. */
@@ -40,4 +42,6 @@ export interface ReplicateTable {
 export interface EstimateOutput {
   result: Result;
   replicates: ReplicateTable;
+  /** What was asked for by `probabilitiesOf`; no part of the result. */
+  probabilities: Prediction[];
 }

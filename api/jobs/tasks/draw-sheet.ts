@@ -6,6 +6,7 @@ import type { RunSheet, Seal } from '#shared/formats/types.ts';
 import { drawSheet } from '#shared/runsheet/draw-sheet.ts';
 import { openSeal } from '#shared/runsheet/seal.ts';
 import type { ThreadProgress } from '#api/jobs/threads.ts';
+import { taskFactors, type Factors } from './task-factors.ts';
 
 export interface DrawSheetInput {
   id: string;
@@ -30,6 +31,8 @@ export type DrawSheetOutput = {
   rank: number;
   conditionRatio: number;
   draws: number;
+  /** Factors of the sheet's designs, for its first estimate. */
+  factors: Factors;
 };
 
 const totals = (sheet: RunSheet): { sealed: number; totalShots: number } => ({
@@ -46,11 +49,12 @@ export type RandomBytes = (length: number) => Uint8Array;
 export const drawRunSheetTask = (input: DrawSheetInput, report: (progress: ThreadProgress) => void, random: RandomBytes = randomBytes): DrawSheetOutput | { ok: false; message: string } => {
   const gateClass = gateClassById(input.gateClass);
   if (!gateClass) return { ok: false, message: `There is no gate class ${JSON.stringify(input.gateClass)}.` };
+  const store = taskFactors();
   try {
     const drawn = drawSheet({
       gateClass, register: input.register, circuits: input.circuits, shots: input.shots, seed: Buffer.from(random(seedBytes)).toString('hex'),
       issued: { id: input.id, device: input.device, drawnAt: input.drawnAt },
-      newSecret: () => new Uint8Array(random(32)),
+      newSecret: () => new Uint8Array(random(32)), factors: store,
       onProgress: ({ draws, circuits, fraction }) => report({ stage: `Draw ${draws + 1}, ${circuits} circuits to estimate from`, fraction }),
     });
     if (!drawn.secret) throw new Error('A sheet of the registry was drawn without a seal.');
@@ -58,7 +62,7 @@ export const drawRunSheetTask = (input: DrawSheetInput, report: (progress: Threa
     const weakest = [...drawn.designs].sort((a, b) => a.conditionRatio - b.conditionRatio)[0];
     return {
       ok: true, bytes, sha256: sha256Hex(bytes), seal: openSeal(drawn.sheet, drawn.secret), circuits: drawn.circuits, ...totals(drawn.sheet),
-      rank: Math.max(...drawn.designs.map((d) => d.rank)), conditionRatio: weakest?.conditionRatio ?? 0, draws: drawn.draws,
+      rank: Math.max(...drawn.designs.map((d) => d.rank)), conditionRatio: weakest?.conditionRatio ?? 0, draws: drawn.draws, factors: store.made,
     };
   } catch (fault) {
     if (fault instanceof AppError) return { ok: false, message: fault.message };

@@ -8,12 +8,15 @@ import { summariseResult, type ResultSummary } from '#api/modules/submissions/re
 import { driftOf } from './drift.ts';
 import { readStored } from './read-stored.ts';
 import { sealedPointsOf } from './sealed-points.ts';
+import { taskFactors, type Factors } from './task-factors.ts';
 
 export interface EstimateDatasetInput {
   bytes: Uint8Array;
   /** The opened seal where the dataset matched its run sheet. */
   seal: Seal | null;
   replicates: number;
+  /** Factors that are kept for the designs of the dataset's run sheet. */
+  factors?: Factors;
   /** Method version; the official one unless told. */
   method?: string;
 }
@@ -29,6 +32,8 @@ export interface EstimateDatasetOutput {
   summary: ResultSummary;
   drift: BlockMisfit[];
   sealedPoints: SealedPoint[];
+  /** Factors that were worked out and are worth keeping with the run sheet. */
+  factors: Factors;
 }
 
 export interface EstimateReport {
@@ -48,20 +53,18 @@ const littleEndian = ({ values }: ReplicateTable): Uint8Array => {
 };
 
 /** The estimate of a stored dataset, and beside it what the review looks at: drift by block, sealed circuits one by one. */
-export const estimateDataset = ({ bytes, seal, replicates, method }: EstimateDatasetInput, report: (progress: EstimateReport) => void): EstimateDatasetOutput => {
+export const estimateDataset = ({ bytes, seal, replicates, factors, method }: EstimateDatasetInput, report: (progress: EstimateReport) => void): EstimateDatasetOutput => {
   report({ stage: 'design', fraction: 0.01 });
   const { dataset, contentId, gateClass } = readStored(bytes);
-  const input = { dataset, contentId, gateClass, seal, ...(method === undefined ? {} : { method }) };
-  const { result, replicates: table } = estimate({
-    ...input,
-    replicates,
+  const circuits: PlainCircuit[] = dataset.patches.flatMap(({ qubits, circuits }) => circuits.map(({ id, gates }) => ({ id, qubits, gates })));
+  const store = taskFactors(factors);
+  const { result, replicates: table, probabilities } = estimate({
+    dataset, contentId, gateClass, seal, replicates, factors: store, ...(method === undefined ? {} : { method }),
+    probabilitiesOf: { format: 'evenbeam.circuits', formatVersion: '1.0.0', circuits },
     onProgress: ({ stage, fraction, replicatesDone }) => report({ stage, fraction: spans[stage][0] + spans[stage][1] * fraction, ...(replicatesDone === undefined ? {} : { replicatesDone }) }),
   });
   report({ stage: 'diagnostics', fraction: 0.9 });
   const sealed = new Set(seal?.sealed ?? []);
-  const circuits: PlainCircuit[] = dataset.patches.flatMap(({ qubits, circuits }) => circuits.map(({ id, gates }) => ({ id, qubits, gates })));
-  // The estimate itself does not depend on the number of replicates, so one is enough to read predictions off it.
-  const { predictions } = estimate({ ...input, replicates: 1, predict: { format: 'evenbeam.circuits', formatVersion: '1.0.0', circuits } }).result;
   const canonical = new TextEncoder().encode(canonicalJson(result));
   const stored = littleEndian(table);
   return {
@@ -71,7 +74,8 @@ export const estimateDataset = ({ bytes, seal, replicates, method }: EstimateDat
     replicatesSha256: sha256Hex(stored),
     method: result.method,
     summary: summariseResult(result, dataset, sealed),
-    drift: driftOf(dataset, contentId, sealed, result, predictions),
-    sealedPoints: sealedPointsOf(dataset, sealed, predictions),
+    drift: driftOf(dataset, contentId, sealed, result, probabilities),
+    sealedPoints: sealedPointsOf(dataset, sealed, probabilities),
+    factors: store.made,
   };
 };

@@ -6,6 +6,7 @@ import type { EstimateDatasetOutput, EstimateReport } from '#api/jobs/tasks/esti
 import { recordAudit } from '#api/lib/audit.ts';
 import { runSql } from '#api/lib/run-sql.ts';
 import { inTransaction, type Work } from '#api/lib/work.ts';
+import { keepFactors, readFactors } from '#api/modules/run-sheets/factor-store.ts';
 import { readBytes } from '#api/modules/submissions/file-store.ts';
 import { lockCampaign, moveItem } from './store.ts';
 
@@ -23,6 +24,7 @@ interface Begun {
   replicates: number;
   bytes_sha256: string;
   sealed: boolean;
+  run_sheet_id: string | null;
 }
 
 const stateNow = `(select s.state from entry_state s where s.accession = v.accession and s.version = v.version order by s.id desc limit 1)`;
@@ -40,7 +42,7 @@ const begin = (work: Work, { campaign: id, entryVersion, jobId }: ItemKey): Prom
     };
     if (campaign.state === 'paused') return put('waiting');
     if (campaign.state !== 'running') return put('cancelled');
-    const [entry] = await runSql<Begun & { state: string; present: boolean }>(em, `select $2 as method, v.accession, v.version, v.replicates, v.bytes_sha256, v.sealed, ${stateNow} as state,
+    const [entry] = await runSql<Begun & { state: string; present: boolean }>(em, `select $2 as method, v.accession, v.version, v.replicates, v.bytes_sha256, v.sealed, v.run_sheet_id, ${stateNow} as state,
       exists (select 1 from entry_result r where r.entry_version_id = v.id and r.method = $2) as present from entry_version v where v.id = $1`, [entryVersion, campaign.method]);
     if (!entry) throw new Error(`The version ${entryVersion} of ${id} is not there.`);
     if (entry.present) return put('done');
@@ -69,6 +71,7 @@ const finish = (work: Work, key: ItemKey, entry: Begun, output: EstimateDatasetO
       values ($1, $2, $3, $4, $5, $6, $7, $8, $9, $10) on conflict do nothing returning method`, [
       key.entryVersion, entry.method, key.campaign, output.result, output.resultSha256, output.replicates, output.replicatesSha256, output.summary.replicates, JSON.stringify(output.summary), at,
     ]);
+    if (entry.run_sheet_id !== null) await keepFactors(em, entry.run_sheet_id, output.factors, at);
     await moveItem(em, key.campaign, key.entryVersion, { state: 'done', at });
     if (added.length > 0) recordAudit(em, { at, action: 'entry.add-result', subjectType: 'entry', subjectId: versionedAccessionOf(entry.accession, entry.version), detail: { campaign: key.campaign, method: entry.method, resultSha256: output.resultSha256 } });
   });
@@ -88,7 +91,8 @@ export const runItem = async (work: Work, key: ItemKey, options: { signal?: Abor
   const entry = await begin(work, key);
   if (!entry) return;
   try {
-    const output = await work.runInThread('estimate-dataset', { ...(await readInput(work, entry)), replicates: entry.replicates, method: entry.method }, options);
+    const factors = entry.run_sheet_id === null ? [] : await readFactors(work.em, entry.run_sheet_id, work.clock.now());
+    const output = await work.runInThread('estimate-dataset', { ...(await readInput(work, entry)), factors, replicates: entry.replicates, method: entry.method }, options);
     await finish(work, key, entry, output);
   } catch (fault) {
     if (!(fault instanceof AppError)) throw fault;

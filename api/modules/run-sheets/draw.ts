@@ -5,6 +5,7 @@ import { recordAudit } from '#api/lib/audit.ts';
 import { runSql } from '#api/lib/run-sql.ts';
 import { inTransaction, type Work } from '#api/lib/work.ts';
 import type { DrawSheetOutput } from '#api/jobs/tasks/draw-sheet.ts';
+import { keepFactors } from './factor-store.ts';
 import { findRunSheet } from './service.ts';
 
 export interface DrawOptions {
@@ -26,6 +27,7 @@ const keep = (work: Work, id: string, drawnAt: Date, drawn: DrawSheetOutput): Pr
     });
     await runSql(tx.em, 'insert into run_sheet_file (run_sheet_id, bytes, sha256) values ($1, $2, $3)', [id, drawn.bytes, drawn.sha256]);
     await runSql(tx.em, 'insert into run_sheet_secret (run_sheet_id, seal) values ($1, $2)', [id, JSON.stringify(drawn.seal)]);
+    await keepFactors(tx.em, id, drawn.factors, drawnAt);
     recordAudit(tx.em, { at: drawnAt, action: 'run-sheet.draw', subjectType: 'run-sheet', subjectId: id, organisationId: sheet.organisation.id, detail: { sheetSha256: drawn.sha256, sealSha256: drawn.seal.sealSha256, circuits: drawn.circuits, draws: drawn.draws } });
     return true;
   });

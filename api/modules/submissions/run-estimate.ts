@@ -10,6 +10,7 @@ import { SubmissionEstimate } from '#api/entities/submission-estimate.ts';
 import { SubmissionFile } from '#api/entities/submission-file.ts';
 import { runSql } from '#api/lib/run-sql.ts';
 import { inTransaction, type Work } from '#api/lib/work.ts';
+import { keepFactors, readFactors } from '#api/modules/run-sheets/factor-store.ts';
 import { readSheet, readSheetSeal } from '#api/modules/run-sheets/sheet-store.ts';
 import { readBytes } from './file-store.ts';
 import { block, lockSubmission, pass } from './life-cycle.ts';
@@ -56,6 +57,7 @@ const finish = (work: Work, id: string, round: number, checks: Check[], device: 
       ]);
       submission.estimateId = estimated.id;
     }
+    if (estimated && submission.runSheet) await keepFactors(tx.em, submission.runSheet.id, estimated.output.factors, tx.clock.now());
     tx.em.assign(submission, { checks, device, stage: null, progress: 1, replicatesDone: estimated?.output.summary.replicates ?? null });
     const stopped = checks.find((c) => c.blocking && c.status === 'failed');
     if (stopped) await block(tx, submission, `${stopped.title}: ${stopped.detail}`);
@@ -80,7 +82,8 @@ export const runEstimate = async (work: Work, id: string, round: number, options
   await work.em.fork().nativeUpdate(Submission, { id, round, state: 'checking' }, { checks: known });
   const seal: Seal | null = sheet && 'seal' in sheet ? sheet.seal : null;
   try {
-    const output = await work.runInThread('estimate-dataset', { bytes, seal, replicates: submission.replicates }, { ...thread, ...(options.onProgress ? { onProgress: options.onProgress } : {}) });
+    const factors = sheet && 'seal' in sheet ? await readFactors(work.em, sheet.id, work.clock.now()) : [];
+    const output = await work.runInThread('estimate-dataset', { bytes, seal, replicates: submission.replicates, factors }, { ...thread, ...(options.onProgress ? { onProgress: options.onProgress } : {}) });
     return await finish(work, id, round, [...known, ...checksOfEstimate(output.summary, output.drift)], device.id, { id: randomUUID(), output });
   } catch (fault) {
     if (!(fault instanceof AppError)) throw fault;

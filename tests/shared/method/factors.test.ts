@@ -116,6 +116,8 @@ test('one qubit is never kept: its SVD takes milliseconds and its whole spectrum
 test('a factor is read under its own key and size only', () => {
   const packed = packFactor('here', { columns: 2, gaugeDimension: 1, sigma1: 3, sigmaR: 0.5, lower: Float64Array.of(1, 2, 3) });
   expect(unpackFactor('here', packed, 2)).toEqual({ columns: 2, gaugeDimension: 1, sigma1: 3, sigmaR: 0.5, lower: Float64Array.of(1, 2, 3) });
+  const inside = Buffer.concat([Buffer.of(1, 2, 3), packed]).subarray(3);
+  expect(unpackFactor('here', inside, 2)).toEqual(unpackFactor('here', packed, 2));
   expect(unpackFactor('there', packed, 2)).toBeNull();
   expect(unpackFactor('here', packed, 3)).toBeNull();
   const empty = packFactor('here', { columns: 2, gaugeDimension: 0, sigma1: 3, sigmaR: 0.5, lower: new Float64Array(0) });
