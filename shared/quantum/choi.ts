@@ -2,11 +2,10 @@ import { smallestSymmetricEigenvalue } from '#shared/linalg/symmetric-eigen.ts';
 import { pauliBasis } from '#shared/quantum/pauli.ts';
 
 /**
- * Smallest eigenvalue of the Choi matrix J = (1/D) Σ_ab R_ab P_a ⊗ P_bᵀ (trace 1) of a map with D×D Pauli transfer
- * matrix R. Negative = not completely positive. J is Hermitian of order D; its real form [[A, −B], [B, A]] of order 2D
- * has the same eigenvalues, each twice.
+ * Real form [[A, −B], [B, A]] (order 2D, row-major) of the Choi matrix A + iB = J = (1/D) Σ_ab R_ab P_a ⊗ P_bᵀ (trace 1) of a map
+ * with D×D Pauli transfer matrix R at `at` of `maps`. It has the eigenvalues of J, each twice.
  */
-export function smallestChoiEigenvalue(map: Float64Array, n: number): number {
+export function choiRealForm(maps: Float64Array, n: number, at = 0): Float64Array {
   const d = 1 << n;
   const D = d * d;
   const basis = pauliBasis(n);
@@ -14,7 +13,7 @@ export function smallestChoiEigenvalue(map: Float64Array, n: number): number {
   const real = new Float64Array(order * order);
   for (let a = 0; a < D; a++) {
     for (let b = 0; b < D; b++) {
-      const weight = map[a * D + b]! / D;
+      const weight = maps[at + a * D + b]! / D;
       if (weight === 0) continue;
       const pa = basis[a]!;
       const pb = basis[b]!;
@@ -33,5 +32,38 @@ export function smallestChoiEigenvalue(map: Float64Array, n: number): number {
       }
     }
   }
-  return smallestSymmetricEigenvalue(real, order);
+  return real;
+}
+
+/** The transfer matrix of a Choi matrix in its real form: R_ab = tr(J·P_a ⊗ P_bᵀ). Undoes `choiRealForm`. */
+export function mapFromChoi(real: Float64Array, n: number): Float64Array {
+  const d = 1 << n;
+  const D = d * d;
+  const basis = pauliBasis(n);
+  const order = 2 * D;
+  const map = new Float64Array(D * D);
+  for (let a = 0; a < D; a++) {
+    for (let b = 0; b < D; b++) {
+      const pa = basis[a]!;
+      const pb = basis[b]!;
+      let sum = 0;
+      for (let i = 0; i < d; i++) {
+        for (let k = 0; k < d; k++) {
+          const row = i * d + (k ^ pb.flip);
+          const column = (i ^ pa.flip) * d + k;
+          const re = pa.re[i]! * pb.re[k]! - pa.im[i]! * pb.im[k]!;
+          const im = pa.re[i]! * pb.im[k]! + pa.im[i]! * pb.re[k]!;
+          // tr(J·X) takes J's entry (column, row) beside X's entry (row, column).
+          sum += re * real[column * order + row]! - im * real[(column + D) * order + row]!;
+        }
+      }
+      map[a * D + b] = sum;
+    }
+  }
+  return map;
+}
+
+/** Smallest eigenvalue of the Choi matrix of a map. Negative = not completely positive. */
+export function smallestChoiEigenvalue(map: Float64Array, n: number): number {
+  return smallestSymmetricEigenvalue(choiRealForm(map, n), 2 << (2 * n));
 }

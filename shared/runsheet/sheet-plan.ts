@@ -29,7 +29,7 @@ const leastLocal = 200;
 /** Circuits over the whole register of a chained sheet, all sealed: they test the prediction. */
 const wholeRegister = 40;
 
-/** Structured sheets are for one qubit: the sequences and blocks of a pair have some three thousand parameters of their own. */
+/** Structured sheets are for one qubit: the sequences of a pair have some seven hundred parameters of their own beside those of its gates. */
 export const canBeStructured = (gateClass: Pick<GateClass, 'registerSize'>): boolean => gateClass.registerSize === 1;
 
 export const structuredRefusal = (gateClass: Pick<GateClass, 'id'>): string => `Structured sheets are drawn for gate classes of one qubit; ${gateClass.id} has more.`;

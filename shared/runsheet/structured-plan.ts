@@ -96,29 +96,24 @@ export interface StructuredCircuit {
 const begins = (gates: readonly string[], with_: readonly string[]): boolean => with_.every((label, i) => gates[i] === label);
 
 /**
- * A circuit as preparation sequence, repeated block and readout sequence; null where it has no such form. Of several readings
- * the one that repeats most gates is taken, of those the one with the shortest block, then the first in the plan's order.
+ * Every way in which a circuit is a preparation sequence, a block repeated as a sheet repeats it (0, 1, 2, 4 …), and a readout
+ * sequence: "a a a" may be "a" prepared and "a" repeated twice, or nothing prepared and "a a a" read. None = it has no such form.
  */
-export function readStructure(gates: readonly string[], plan: StructuredPlan): StructuredCircuit | null {
-  let best: StructuredCircuit | null = null;
-  let most = -1;
-  let shortest = Infinity;
+export function readStructure(gates: readonly string[], plan: StructuredPlan): StructuredCircuit[] {
+  const out: StructuredCircuit[] = [];
   plan.preparations.forEach((prep, preparation) => {
     if (!begins(gates, prep)) return;
     plan.readouts.forEach((read, readout) => {
       const middle = gates.length - prep.length - read.length;
       if (middle < 0 || !begins(gates.slice(gates.length - read.length), read)) return;
-      if (middle === 0) {
-        if (most < 0) [best, most] = [{ preparation, block: -1, power: 0, readout }, 0];
-        return;
-      }
-      plan.blocks.forEach((block, b) => {
-        const power = middle / block.length;
-        if (!Number.isInteger(power) || middle < most || (middle === most && block.length >= shortest)) return;
-        for (let i = 0; i < middle; i++) if (gates[prep.length + i] !== block[i % block.length]) return;
-        [best, most, shortest] = [{ preparation, block: b, power, readout }, middle, block.length];
+      if (middle === 0) out.push({ preparation, block: -1, power: 0, readout });
+      plan.blocks.forEach((label, block) => {
+        const power = middle / label.length;
+        if (!powersOf(label, plan.longest).includes(power)) return;
+        for (let i = 0; i < middle; i++) if (gates[prep.length + i] !== label[i % label.length]) return;
+        out.push({ preparation, block, power, readout });
       });
     });
   });
-  return best;
+  return out;
 }
