@@ -1,7 +1,8 @@
 import { mkdirSync } from 'node:fs';
 import { join, resolve } from 'node:path';
 import { MikroORM } from '@mikro-orm/postgresql';
-import { configFrom, inheritedEnvironment, readLauncherEnvironment } from '#api/config/config.ts';
+import { configFrom, inheritedEnvironment, isLoopback, readLauncherEnvironment } from '#api/config/config.ts';
+import { startDoiStandIn } from '#api/fakes/doi/start.ts';
 import { startGoogleStandIn } from '#api/fakes/google/start.ts';
 import { startMailStandIn } from '#api/fakes/mail/start.ts';
 import { registerPeople } from '#api/fakes/register-people.ts';
@@ -78,6 +79,8 @@ const start = async (): Promise<KeptChild[]> => {
   if (standIn) started.push(() => standIn.stop());
   const mail = settings.SMTP_URL ? null : await startMailStandIn(join(dataDir, 'mail'));
   if (mail) started.push(() => mail.stop());
+  const agency = settings.DATACITE_URL || !isLoopback(publicUrl) ? null : await startDoiStandIn(join(dataDir, 'dois'), secrets.google);
+  if (agency) started.push(() => agency.stop());
 
   const own = {
     NODE_ENV: 'production',
@@ -92,6 +95,7 @@ const start = async (): Promise<KeptChild[]> => {
     GOOGLE_CLIENT_SECRET: credentials.clientSecret,
     ...(standIn ? { GOOGLE_AUTHORIZATION_URL: standIn.authorizationUrl, GOOGLE_TOKEN_URL: standIn.tokenUrl, GOOGLE_USERINFO_URL: standIn.userinfoUrl } : {}),
     SMTP_URL: settings.SMTP_URL ?? mail?.url,
+    ...(agency ? { DATACITE_URL: agency.url, DATACITE_USER: agency.user, DATACITE_PASSWORD: agency.password, DOI_PREFIX: agency.prefix } : {}),
     DATA_DIR: dataDir,
   };
   const env = { ...inheritedEnvironment(), ...own };
@@ -117,6 +121,7 @@ const start = async (): Promise<KeptChild[]> => {
   say(`\nEvenbeam is at ${publicUrl}`);
   if (standIn) say(`Sign-in is a stand-in on this machine; these invented people can sign in:\n${whoCanSignIn()}`);
   if (mail) say(`Mail is kept in ${join(dataDir, 'mail')}; nothing is sent.`);
+  if (agency) say(`DOIs are a stand-in on this machine and resolve nowhere; what is registered is kept in ${agency.file}.`);
   say('Stop with Ctrl-C.');
   return children;
 };

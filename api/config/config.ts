@@ -9,6 +9,15 @@ export interface GoogleConfig {
   userinfoUrl: string;
 }
 
+/** The agency that registers DOIs, by DataCite's REST interface. */
+export interface DoiConfig {
+  url: string;
+  user: string;
+  password: string;
+  /** "10.1234" */
+  prefix: string;
+}
+
 export interface Config {
   environment: Environment['NODE_ENV'];
   host: string;
@@ -27,6 +36,8 @@ export interface Config {
   google: GoogleConfig;
   smtpUrl: string;
   mailFrom: string;
+  /** Null: no DOIs are registered. */
+  doi: DoiConfig | null;
   logLevel: Environment['LOG_LEVEL'];
   trustProxy: number;
   rateLimits: boolean;
@@ -42,6 +53,14 @@ const loopbackHosts = new Set(['127.0.0.1', 'localhost', '[::1]', '::1']);
 
 /** Does an address stay on this machine? */
 export const isLoopback = (url: string): boolean => loopbackHosts.has(new URL(url).hostname);
+
+/** All four variables of the agency, or none. */
+const doiFrom = ({ DATACITE_URL: url, DATACITE_USER: user, DATACITE_PASSWORD: password, DOI_PREFIX: prefix }: Environment, publicUrl: string): DoiConfig | null => {
+  if (url === undefined && user === undefined && password === undefined && prefix === undefined) return null;
+  if (url === undefined || user === undefined || password === undefined || prefix === undefined) throw new Error('The settings cannot be used:\n  DATACITE_URL, DATACITE_USER, DATACITE_PASSWORD and DOI_PREFIX are set together or not at all.');
+  if (!isLoopback(publicUrl) && isLoopback(url)) throw new Error(`The settings cannot be used:\n  PUBLIC_URL = "${publicUrl}" is a public address, but DOIs go to the local stand-in at ${url}.`);
+  return { url, user, password, prefix };
+};
 
 /** The whole configuration from a set of variables. Refuses a public registry whose sign-in is a stand-in. */
 export const configFrom = (source: Record<string, string | undefined>): Config => {
@@ -70,6 +89,7 @@ export const configFrom = (source: Record<string, string | undefined>): Config =
     },
     smtpUrl: env.SMTP_URL,
     mailFrom: env.MAIL_FROM,
+    doi: doiFrom(env, publicUrl),
     logLevel: env.LOG_LEVEL,
     trustProxy: env.TRUST_PROXY,
     rateLimits: env.RATE_LIMITS,

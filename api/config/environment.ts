@@ -23,6 +23,10 @@ export const environmentSchema = z.object({
   GOOGLE_USERINFO_URL: address.default('https://openidconnect.googleapis.com/v1/userinfo'),
   SMTP_URL: z.string().regex(/^smtps?:\/\//, 'must begin with smtp:// or smtps://'),
   MAIL_FROM: z.string().default('Evenbeam registry <registry@evenbeam.example>'),
+  DATACITE_URL: address.optional(),
+  DATACITE_USER: z.string().optional(),
+  DATACITE_PASSWORD: z.string().optional(),
+  DOI_PREFIX: z.string().regex(/^10\.\d{4,9}$/, 'must be a DOI prefix such as 10.1234').optional(),
   LOG_LEVEL: z.enum(['fatal', 'error', 'warn', 'info', 'debug', 'trace', 'silent']).default('info'),
   TRUST_PROXY: z.coerce.number().int().min(0).max(5).default(0),
   RATE_LIMITS: flag.default(true),
@@ -47,6 +51,7 @@ export const launcherSchema = environmentSchema
     GOOGLE_CLIENT_ID: z.string().optional(),
     GOOGLE_CLIENT_SECRET: z.string().optional(),
     SMTP_URL: environmentSchema.shape.SMTP_URL.optional(),
+    DATACITE_URL: environmentSchema.shape.DATACITE_URL,
     DEMO: flag.optional(),
     CI: z.string().optional(),
   });
@@ -63,7 +68,7 @@ export const parseEnvironment = <T extends z.ZodType>(schema: T, source: Record<
   const lines = parsed.error.issues.map((issue) => {
     const name = issue.path.join('.');
     const given = source[name];
-    const secret = /SECRET|DATABASE|SMTP|KEY/.test(name);
+    const secret = /SECRET|DATABASE|SMTP|KEY|PASSWORD/.test(name);
     return given === undefined || given === '' ? `${name} is not set.` : `${name}${secret ? '' : ` = ${JSON.stringify(given)}`}: ${issue.message}.`;
   });
   throw new Error(`The settings cannot be used:\n  ${lines.join('\n  ')}`);

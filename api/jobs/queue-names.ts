@@ -8,6 +8,7 @@ export const queues = {
   'deliver-mail': z.object({}),
   're-estimate': z.object({ campaign: z.string(), entryVersion: z.uuid() }),
   'advance-campaigns': z.object({}),
+  'register-dois': z.object({}),
   'house-keeping': z.object({}),
 } as const;
 

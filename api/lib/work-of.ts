@@ -9,16 +9,18 @@ export const workOf = ({ em, deps, caller, requestId }: Pick<Scope, 'em' | 'deps
   queue: deps.queue,
   runInThread: deps.threads.run,
   logKey: deps.logKey,
+  doiPrefix: deps.config.doi?.prefix ?? null,
   caller,
   requestId,
 });
 
 /** The registry's own work: in a job, or while it looks after itself. */
-export const registryWork = (em: Work['em'], deps: Pick<Deps, 'clock' | 'queue' | 'logKey' | 'threads'>, runInThread: Work['runInThread'] = deps.threads.run): Work => ({
+export const registryWork = (em: Work['em'], deps: Pick<Deps, 'clock' | 'queue' | 'logKey' | 'threads' | 'config'>, runInThread: Work['runInThread'] = deps.threads.run): Work => ({
   em,
   clock: deps.clock,
   queue: deps.queue,
   runInThread,
   logKey: deps.logKey,
+  doiPrefix: deps.config.doi?.prefix ?? null,
   caller: null,
 });

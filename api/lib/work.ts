@@ -16,6 +16,8 @@ export interface Work {
   runInThread: RunInThread;
   /** Signs what is written to the log. */
   logKey: LogKey;
+  /** Under which DOIs are registered; null or absent: none are. */
+  doiPrefix?: string | null;
   caller: Caller | null;
   requestId?: string | null;
 }

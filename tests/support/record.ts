@@ -33,7 +33,7 @@ export interface Desk {
 export const workFor = async (app: TestApp, user: { id: string } | null): Promise<Work> => {
   const em = app.deps.orm.em.fork();
   const caller = user ? await callerOf(em, user.id, app.clock.now(), '') : null;
-  return { em, clock: app.clock, queue: app.deps.queue, runInThread: app.deps.threads.run, logKey: app.deps.logKey, caller };
+  return { em, clock: app.clock, queue: app.deps.queue, runInThread: app.deps.threads.run, logKey: app.deps.logKey, doiPrefix: app.deps.config.doi?.prefix ?? null, caller };
 };
 
 /** A provider with a contributor and a device, and a curator of nobody's. */

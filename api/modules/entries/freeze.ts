@@ -10,6 +10,7 @@ import { Submission } from '#api/entities/submission.ts';
 import { recordAudit } from '#api/lib/audit.ts';
 import { runSql } from '#api/lib/run-sql.ts';
 import { inTransaction, type Work } from '#api/lib/work.ts';
+import { oweDoi } from '#api/modules/citations/owe-doi.ts';
 import { logEvent } from '#api/modules/log/append.ts';
 import { signRecord } from '#api/modules/log/record-signature.ts';
 import { readSheetSeal } from '#api/modules/run-sheets/sheet-store.ts';
@@ -114,6 +115,7 @@ export const freezeSubmission = async (work: Work, submission: Submission, decis
   await (kept ? embargo : freeze)(work, submission);
   if (!kept) {
     await logEvent(work, 'frozen', name);
+    await oweDoi(work, name);
     await supersedeEarlier(work, name);
   }
   recordAudit(em, { at: now, action: kept ? 'entry.embargo' : 'entry.freeze', subjectType: 'entry', subjectId: versionedAccessionOf(name.accession, name.version), organisationId: submission.organisation.id, requestId: work.requestId ?? null, detail: { submission: submission.id, contentId: file.contentId, resultSha256: estimate.resultSha256 } });
@@ -130,6 +132,7 @@ export const liftEmbargo = (work: Work, id: string): Promise<boolean> =>
     addState(tx, { accession, version }, 'frozen');
     await lift(tx, submission);
     await logEvent(tx, 'frozen', { accession, version });
+    await oweDoi(tx, { accession, version });
     await supersedeEarlier(tx, { accession, version });
     await supersedeIfLate(tx, submission, { accession, version });
     recordAudit(tx.em, { at: tx.clock.now(), action: 'entry.lift', subjectType: 'entry', subjectId: versionedAccessionOf(accession, version), organisationId: submission.organisation.id });
