@@ -1,9 +1,10 @@
 import { readFile } from 'node:fs/promises';
 import { createServer, type Server } from 'node:http';
 import { extname, join, normalize } from 'node:path';
-import { boardFixture, boardListFixture, emptyBoardFixture } from './fixtures/boards.ts';
+import { boardFixture, boardListFixture, differenceFixture, emptyBoardFixture } from './fixtures/boards.ts';
 import { deviceFixture, deviceListFixture } from './fixtures/devices.ts';
 import { entryFixture, entryListFixture } from './fixtures/entries.ts';
+import { versionResultsFixture } from './fixtures/method-results.ts';
 import { visitorFixture } from './fixtures/session.ts';
 
 const types: Readonly<Record<string, string>> = { '.html': 'text/html; charset=utf-8', '.js': 'text/javascript', '.css': 'text/css', '.svg': 'image/svg+xml', '.woff2': 'font/woff2', '.woff': 'font/woff', '.json': 'application/json' };
@@ -15,7 +16,9 @@ export const publicAnswers = (path: string, search: URLSearchParams): unknown =>
   if (path === '/api/v1/me') return visitorFixture;
   if (path === '/api/v1/boards') return boardListFixture;
   if (path === '/api/v1/boards/quarter-turn-1q/1') return search.get('modality') === 'photonic' && search.get('within') === '30' ? emptyBoardFixture : { ...boardFixture, figure: search.get('figure') ?? boardFixture.figure };
+  if (path === '/api/v1/boards/quarter-turn-1q/1/difference') return differenceFixture;
   if (path === '/api/v1/entries') return search.get('q') === 'nothing' ? { items: [], nextCursor: null } : entryListFixture;
+  if (/^\/api\/v1\/entries\/EVB-000042\/v\/\d+\/results$/.test(path)) return versionResultsFixture;
   if (path.startsWith('/api/v1/entries/EVB-000042')) return path.endsWith('/v/1') ? { ...entryFixture, version: 1, state: 'superseded' } : entryFixture;
   if (path === '/api/v1/devices') return deviceListFixture;
   if (path === '/api/v1/devices/meadow-5') return deviceFixture;

@@ -3,7 +3,7 @@ import type { RouteModule } from './lazy-route.ts';
 
 type PageOf = (load: () => Promise<RouteModule>) => LazyRouteFunction<RouteObject>;
 
-/** Pages behind sign-in: desk, run sheets, submissions, reviews, tokens. */
+/** Pages behind sign-in: desk, run sheets, submissions, reviews, tokens, the steward’s office. */
 export const deskRoutes = (page: PageOf): RouteObject[] => [
   {
     path: 'desk',
@@ -30,5 +30,17 @@ export const deskRoutes = (page: PageOf): RouteObject[] => [
     path: 'review',
     lazy: page(() => import('./routes/review/layout.tsx')),
     children: [{ path: ':id?', lazy: page(() => import('./routes/review/desk.tsx')) }],
+  },
+  {
+    path: 'steward',
+    lazy: page(() => import('./routes/steward/layout.tsx')),
+    children: [
+      { index: true, lazy: page(() => import('./routes/steward/home.tsx')) },
+      { path: 'campaigns', lazy: page(() => import('./routes/steward/campaigns.tsx')) },
+      { path: 'campaigns/:id', lazy: page(() => import('./routes/steward/campaign.tsx')) },
+      { path: 'jobs', lazy: page(() => import('./routes/steward/jobs.tsx')) },
+      { path: 'mail', lazy: page(() => import('./routes/steward/mail.tsx')) },
+      { path: 'people', lazy: page(() => import('./routes/steward/people.tsx')) },
+    ],
   },
 ];

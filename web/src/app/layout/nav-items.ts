@@ -18,4 +18,5 @@ export const publicItems: readonly NavItem[] = [
 export const personalItems = (person: Me | null): readonly NavItem[] => [
   ...(isContributor(person) ? [{ to: '/desk', label: 'Desk' }] : []),
   ...(person?.curator ? [{ to: '/review', label: 'Review' }] : []),
+  ...(person?.steward ? [{ to: '/steward', label: 'Office' }] : []),
 ];

@@ -27,7 +27,8 @@ export const methodLines = (results: readonly VersionResult[]): MethodLine[] => 
   // One digit more than usual: what is of interest here is the difference.
   const decimals = columnDecimals(headlines) + 1;
   return results.map(({ method, status, headline, settled, frozen: own, links }) => {
-    const difference = !own && headline?.value != null && frozen?.value != null ? headline.value - frozen.value : null;
+    const [here, there] = [headline?.value ?? null, frozen?.value ?? null];
+    const difference = !own && here !== null && there !== null ? here - there : null;
     return {
       method,
       standing: own ? 'Frozen with this version' : status === 'draft' ? 'Draft, added later' : 'Added later',

@@ -1,0 +1,1 @@
+export { CampaignsPage as Component } from '#web/features/steward/components/campaigns-page.tsx';

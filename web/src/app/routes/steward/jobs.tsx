@@ -1,0 +1,1 @@
+export { JobsPage as Component } from '#web/features/steward/components/jobs-page.tsx';

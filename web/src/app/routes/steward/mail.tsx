@@ -1,0 +1,1 @@
+export { MailPage as Component } from '#web/features/steward/components/mail-page.tsx';

@@ -1,0 +1,1 @@
+export { PeoplePage as Component } from '#web/features/steward/components/people-page.tsx';
