@@ -1,4 +1,6 @@
 import type { Figure, FigureKey } from '#shared/formats/types.ts';
+import { domainReason } from './domain-reason.ts';
+import type { FigureDomain } from './figure-domain.ts';
 import type { EntryState } from './life-cycle.ts';
 
 /** Why an entry is left off its board, and what would change that. */
@@ -18,17 +20,6 @@ export interface PatchFacts {
   /** Circuits estimated from: the sealed ones do not count. */
   circuits: number;
   /** Fewest shots of a circuit. */
-  shots: number;
-}
-
-/** Where the stated coverage of a figure was found to hold, by class. Absent keys: never studied. */
-export interface FigureDomain {
-  gateClass: string;
-  key: FigureKey;
-  depth: number | null;
-  /** Greatest gate loss studied; compared with the upper 95 % bound of every gate's. */
-  gateLoss: number;
-  /** Fewest shots studied. */
   shots: number;
 }
 
@@ -70,19 +61,10 @@ const floorReason = (facts: EligibilityFacts): Reason | null => {
   return null;
 };
 
-const domainReason = (facts: EligibilityFacts, domains: readonly FigureDomain[] | null): Reason | null => {
-  if (!domains || !facts.gateClass) return null;
-  const known = domains.filter((d) => d.gateClass === facts.gateClass?.id && d.key === facts.figure.key && d.depth === facts.figure.depth);
-  const losses = facts.figures.filter((f) => f.key === 'gate-loss').map((f) => f.intervals?.find((i) => i.level === 0.95)?.high ?? Number.POSITIVE_INFINITY);
-  const loss = Math.max(...losses, 0);
-  const shots = Math.min(...facts.patches.map((p) => p.shots));
-  if (known.some((d) => loss <= d.gateLoss && shots >= d.shots)) return null;
-  return { code: 'domain', sentence: 'The intervals of this figure were not shown to hold at this gate loss and number of shots.', remedy: 'More shots, or a quieter device.' };
-};
-
 /**
  * May this entry stand on the board of its class, read by this figure? Every reason against it, the gravest first;
- * an empty list means eligible. Pure. `domains` null: no coverage study is published yet and the rule does not apply.
+ * an empty list means eligible. Pure. `domains`: where each figure's
+ * coverage was shown to hold; null = the rule does not apply.
  */
 export const ineligibility = (facts: EligibilityFacts, domains: readonly FigureDomain[] | null = null): Reason[] => {
   const reasons: (Reason | null | false)[] = [

@@ -1,5 +1,6 @@
 import { registerFigure } from '#shared/domain/board-figures.ts';
 import { ineligibility, type Reason } from '#shared/domain/eligibility.ts';
+import { figureDomains } from '#shared/domain/figure-domains.ts';
 import { gateClassById } from '#shared/domain/gate-classes.ts';
 import { versionedAccessionOf } from '#shared/domain/ids.ts';
 import type { FigureKey } from '#shared/formats/types.ts';
@@ -44,5 +45,5 @@ export const reasonsAgainst = (candidate: Candidate, all: readonly Candidate[], 
     figure: { ...reading, found: registerFigure(row.summary.figures, reading, row.register.length) },
     newer: newer && nameOf(newer),
     state,
-  });
+  }, figureDomains);
 };

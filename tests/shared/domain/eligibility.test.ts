@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import { ineligibility, patchFloor, type EligibilityFacts, type FigureDomain } from '#shared/domain/eligibility.ts';
+import { ineligibility, patchFloor, type EligibilityFacts } from '#shared/domain/eligibility.ts';
+import type { FigureDomain } from '#shared/domain/figure-domain.ts';
 import type { Figure } from '#shared/formats/types.ts';
 
 const figure = (key: Figure['key'], depth: number | null, value: number | null, high = 0): Figure => ({
@@ -60,11 +61,23 @@ describe('eligibility for a board', () => {
   });
 
   it('with a domain table: inside by the upper bound of the largest gate loss and by shots; a figure that was never studied is outside', () => {
-    const domain: FigureDomain = { gateClass: 'quarter-turn-1q/1', key: 'retained-signal', depth: 16, gateLoss: 0.01, shots: 500 };
+    const domain: FigureDomain = { gateClass: 'quarter-turn-1q/1', key: 'retained-signal', depth: 16, gateLoss: { from: 0, to: 0.01 }, shots: { from: 500, below: null } };
     expect(codes(good, [domain])).toEqual([]);
-    expect(codes(good, [{ ...domain, gateLoss: 0.003 }])).toEqual(['domain']);
-    expect(codes(good, [{ ...domain, shots: 1000 }])).toEqual(['domain']);
+    expect(codes(good, [{ ...domain, gateLoss: { from: 0, to: 0.003 } }])).toEqual(['domain']);
+    expect(codes(good, [{ ...domain, gateLoss: { from: 0.003, to: 0.01 } }])).toEqual(['domain']);
+    expect(codes(good, [{ ...domain, shots: { from: 1000, below: null } }])).toEqual(['domain']);
+    expect(codes(good, [{ ...domain, shots: { from: 100, below: 500 } }])).toEqual(['domain']);
     expect(codes(good, [{ ...domain, depth: 64 }])).toEqual(['domain']);
     expect(codes(good, [])).toEqual(['domain']);
+  });
+
+  it('says in numbers why a figure is outside its domain, and what would change it', () => {
+    const domain: FigureDomain = { gateClass: 'quarter-turn-1q/1', key: 'retained-signal', depth: 16, gateLoss: { from: 0, to: 0.003 }, shots: { from: 500, below: null } };
+    const sentence = (domains: FigureDomain[]) => ineligibility(good, domains)[0]!.sentence;
+    expect(sentence([domain])).toBe('Retained signal, depth 16: its intervals were shown to hold up to a gate loss of 0.0030; this entry’s may be as high as 0.0040.');
+    expect(sentence([{ ...domain, gateLoss: { from: 0.003, to: 0.01 } }])).toBe('Retained signal, depth 16: its intervals were shown to hold from a gate loss of 0.0030 on; this entry’s may be as low as 0.0020.');
+    expect(sentence([{ ...domain, shots: { from: 1000, below: null } }])).toBe('Retained signal, depth 16: its intervals were not shown to hold in this gate class at 500 shots.');
+    expect(ineligibility(good, [{ ...domain, shots: { from: 1000, below: null } }])[0]!.remedy).toBe('A dataset of at least 1000 shots a circuit, or another figure.');
+    expect(sentence([])).toBe('Retained signal, depth 16: its intervals were not shown to hold in this gate class at any gate loss.');
   });
 });

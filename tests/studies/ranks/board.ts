@@ -5,7 +5,7 @@ import type { Xoshiro256 } from '#shared/random/xoshiro256.ts';
 import { BASE, REFERENCE_SHOTS, type Scenario } from '#tests/studies/ranks/scenarios.ts';
 
 /** Ideal probabilities of the first outcome of twenty circuits: certain ones, and ones in between. */
-const IDEAL = Array.from({ length: 20 }, (_, c) => (c % 4 === 0 ? 1 : c % 4 === 1 ? 0 : c % 4 === 2 ? 0.85 : 0.15));
+const IDEAL: readonly number[] = Array.from({ length: 20 }, (_, c) => (c % 4 === 0 ? 1 : c % 4 === 1 ? 0 : c % 4 === 2 ? 0.85 : 0.15));
 const SIZE = IDEAL.reduce((sum, p) => sum + (p - 0.5) ** 2, 0);
 
 /** True probabilities of a device that retains the share r of every signal. */

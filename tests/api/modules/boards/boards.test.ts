@@ -1,4 +1,4 @@
-import { beforeAll, describe, expect, it } from 'vitest';
+import { beforeAll, describe, expect, it, vi } from 'vitest';
 import { board as boardContract, boardDifference, type Board } from '#shared/contracts/boards.ts';
 import { device as deviceContract } from '#shared/contracts/devices.ts';
 import { boardReadings } from '#shared/domain/board-figures.ts';
@@ -7,6 +7,12 @@ import { makeDataset, makeDesk, makeDrawnSheet, type Desk } from '#tests/support
 import { accepted } from '#tests/support/life.ts';
 import { asStranger } from '#tests/support/sign-in.ts';
 import { useTestApp } from '#tests/support/test-app.ts';
+
+// What was studied may change; these entries lie inside whatever it is. The rule itself is tested with the domain.
+vi.mock('#shared/domain/figure-domains.ts', async () => {
+  const { boardReadings: readings } = await import('#shared/domain/board-figures.ts');
+  return { figureDomains: Object.values(readings).map(({ key, depth }) => ({ gateClass: 'quarter-turn-1q/1', key, depth, gateLoss: { from: 0, to: 1 }, shots: { from: 1, below: null } })) };
+});
 
 const app = useTestApp();
 const desks: Desk[] = [];
