@@ -28,6 +28,7 @@ interface Listed {
 export const contributors = inventedPeople.filter(({ membership }) => membership === 'contributor').map(({ name }) => name);
 export const curator = 'Ruth Holloway';
 export const onlooker = 'Kit Wren';
+export const steward = 'Agnes Thorne';
 
 const read = async <T>(request: APIRequestContext, path: string): Promise<T> => {
   const answer = await request.get(path);
@@ -46,7 +47,7 @@ const ownThings = async (request: APIRequestContext): Promise<{ submissions: Lis
 /** Signs everyone in and looks for something of every kind. */
 export const findAll = async (browser: Browser, places: Places): Promise<Found> => {
   const found: Found = { sessions: new Map(), entry: '', superseded: '', device: '', submissions: new Map(), sheet: { id: '', person: '' }, cases: [] };
-  for (const person of [...contributors, curator, onlooker]) {
+  for (const person of [...contributors, curator, onlooker, steward]) {
     const context = await browser.newContext({ baseURL: places.url });
     await signInQuietly(context, person);
     found.sessions.set(person, await context.storageState());

@@ -1,5 +1,5 @@
 import { submissionStates, type SubmissionState } from '#shared/domain/life-cycle.ts';
-import { contributors, curator, onlooker, type Found } from './found.ts';
+import { contributors, curator, onlooker, steward, type Found } from './found.ts';
 
 /** A page to look at: its short name, its address and who looks; null = without sign-in. */
 export interface PageToVisit {
@@ -70,8 +70,18 @@ const reviewPages: readonly PageToVisit[] = [
   fixed('desk-curator', '/desk', asCurator),
 ];
 
+const asSteward = { as: () => steward };
+const officePages: readonly PageToVisit[] = [
+  fixed('office-campaigns', '/steward/campaigns', asSteward),
+  fixed('office-campaign-missing', '/steward/campaigns/C-999999', { ...asSteward, refusals: true }),
+  fixed('office-jobs', '/steward/jobs', asSteward),
+  fixed('office-mail', '/steward/mail', asSteward),
+  fixed('office-people', '/steward/people', asSteward),
+  fixed('office-closed', '/steward', asCurator),
+];
+
 /** Every page of the site, in every state that it has of its own. */
-export const pages: readonly PageToVisit[] = [...publicPages, ...deskPages, ...resting.map(submissionPage), ...reviewPages];
+export const pages: readonly PageToVisit[] = [...publicPages, ...deskPages, ...resting.map(submissionPage), ...reviewPages, ...officePages];
 
 export const widths = [{ width: 1440, height: 900 }, { width: 390, height: 844 }] as const;
 export const schemes = ['light', 'dark'] as const;
