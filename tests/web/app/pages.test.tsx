@@ -27,11 +27,17 @@ describe('pages', () => {
     expect(await screen.findByText('4 entries found.')).toBeTruthy();
   });
 
-  it('a board: rows in the order of the answer, the statement on ranks, and what is left off with reason and remedy', async () => {
+  it('a board: rows in the order of the answer with their rank ranges, cut where devices can be told apart, and what is left off with reason and remedy', async () => {
     openPage('/boards/quarter-turn-1q/1');
     const table = await screen.findByRole('table', { name: /Retained signal at depth 16/ });
-    expect(within(table).getAllByRole('rowheader').map((c) => within(c).getByRole('link').textContent)).toEqual(boardFixture.rows.map((r) => r.device.name));
-    expect(screen.getByText(/the order carries no ranks yet\.$/)).toBeTruthy();
+    expect(within(table).getAllByRole('rowheader').flatMap((c) => within(c).queryAllByRole('link').map((a) => a.textContent))).toEqual(boardFixture.rows.map((r) => r.device.name));
+    expect(within(table).getAllByRole('rowheader').filter((c) => within(c).queryByRole('link') === null).map((c) => c.textContent)).toEqual([
+      'Ranks 1 to 3 Three entries that cannot be told apart.', 'Rank 4 Told apart from every other entry on this board.',
+      'Ranks 5 to 7 A chain. Each bracket joins entries that cannot be told apart; Lantern-2 belongs to both.', 'Rank 8 Told apart from every other entry on this board.',
+    ]);
+    expect([...table.querySelectorAll('.rank')].map((c) => c.textContent)).toEqual(['1 to 3', '1 to 3', '1 to 3', '4th', '5 to 6', '5 to 7', '6 to 7', '8th']);
+    expect(within(table).getByText('Cannot be told apart from Marl-4 and Thistle-6')).toBeTruthy();
+    expect(screen.getByText(/^Eight entries are ranked\. Three entries share ranks 1 to 3 and cannot be told apart\. Two places are certain: the 4th and the 8th\.$/)).toBeTruthy();
     expect(screen.getByText('The circuits are the contributor’s own design, not a run sheet.')).toBeTruthy();
     expect(screen.getByText('A run sheet drawn by the registry')).toBeTruthy();
   });
@@ -57,6 +63,14 @@ describe('pages', () => {
     expect(localStorage.getItem('evenbeam.own')).toContain('EVB-000042');
     await userEvent.click(within(tray).getByRole('button', { name: 'Clear' }));
     expect(localStorage.getItem('evenbeam.own')).toBeNull();
+  });
+
+  it('two ranked entries marked as one’s own are compared by their difference', async () => {
+    openPage('/boards/quarter-turn-1q/1');
+    for (const name of ['Meadow-5', 'Quill-7']) await userEvent.click(await screen.findByRole('checkbox', { name: `Mark ${name} as yours` }));
+    expect(await screen.findByText(/^Meadow-5 is better than Quill-7 by 0\.0175/)).toBeTruthy();
+    await userEvent.click(screen.getByRole('checkbox', { name: 'Mark Tarn-1 as yours' }));
+    expect(screen.queryByText(/is better than/)).toBeNull();
   });
 
   it('an entry: headline, all sections, exact files, digests and the command that makes it again', async () => {

@@ -5,13 +5,19 @@ import { isFiltered, viewOf, withField } from '#web/features/boards/board-view.t
 import { boardFixture } from '#tests/support/fixtures/boards.ts';
 
 describe('board data', () => {
-  const data = boardData(boardFixture.rows, 'Board');
+  const data = boardData(boardFixture, 'Board');
 
   it('numbers drawn are the numbers of its table, in the order of the answer', () => {
     const column = data.table.columns.findIndex((c) => c.csv === 'estimate');
     expect(data.table.rows.map((row) => row[column]?.raw)).toEqual(boardFixture.rows.map((row) => row.figure.value));
     const low = data.table.columns.findIndex((c) => c.csv === 'low_95');
     expect(data.table.rows.map((row) => row[low]?.raw)).toEqual(boardFixture.rows.map((row) => row.figure.intervals?.[2]?.low));
+  });
+
+  it('rank ranges and their level stand beside the estimates, and are missing where nothing is ranked', () => {
+    const ranks = (table: typeof data.table) => table.rows.map((row) => ['rank_low', 'rank_high', 'rank_level'].map((csv) => row[table.columns.findIndex((c) => c.csv === csv)]?.raw));
+    expect(ranks(data.table)).toEqual(boardFixture.rows.map(({ rank }) => [rank?.low, rank?.high, 0.95]));
+    expect(ranks(boardData({ rows: boardFixture.rows.map((row) => ({ ...row, rank: null })), ranking: null }, 'Board').table)[0]).toEqual([null, null, null]);
   });
 
   it('one axis holds every interval of every row, and one number of digits is kept', () => {

@@ -44,13 +44,14 @@ export function Component() {
           <div className="cols2">
             <div className="prose">
               <p>A figure is printed with its interval, never alone. The dot is the estimate from the counts; the interval says how far it could move if the same run were repeated.</p>
-              <p>Whether two devices differ cannot be read from their drawn intervals. Until joint rank ranges are published, the order of rows carries no meaning beyond the estimate.</p>
+              <p>A rank range holds every place the entry may take, for all entries at once, at 95 % confidence. A place is printed as a single number only where the range is one place. Entries joined by a bracket cannot be told apart, and their order carries no meaning. <Link to="/method#ranks">How ranks are found</Link>.</p>
+              <p>Only entries taken on equal terms are compared. What stands under “Not ranked” takes no part.</p>
             </div>
             <Caution />
           </div>
         </Section>
       </Wrap>
-      <OwnTray />
+      <OwnTray board={query.data} />
     </div>
   );
 }

@@ -1,5 +1,5 @@
 import { queryOptions } from '@tanstack/react-query';
-import { board, boardList, type Board, type BoardFigure } from '#shared/contracts/boards.ts';
+import { board, boardDifference, boardList, type Board, type BoardDifference, type BoardFigure } from '#shared/contracts/boards.ts';
 import { apiGet } from '#web/lib/api-client.ts';
 
 export const boardListQuery = () =>
@@ -31,4 +31,10 @@ export const boardQuery = (gateClass: string, view: BoardView) =>
   queryOptions({
     queryKey: ['board', gateClass, view],
     queryFn: ({ signal }): Promise<Board> => apiGet(apiPath(gateClass), board, { signal, query: { ...view } }),
+  });
+
+export const differenceQuery = (gateClass: string, figure: BoardFigure, a: string, b: string) =>
+  queryOptions({
+    queryKey: ['board', gateClass, 'difference', figure, a, b],
+    queryFn: ({ signal }): Promise<BoardDifference> => apiGet(`${apiPath(gateClass)}/difference`, boardDifference, { signal, query: { figure, a, b } }),
   });

@@ -15,15 +15,15 @@ import { KeyLine } from './key-line.tsx';
 export function BoardBody({ board }: { board: Board }) {
   const [search, setSearch] = useSearchParams();
   const view = viewOf(search);
-  const caption = `${boardFigureWords[board.figure]}, all entries taken on equal terms`;
-  const data = useMemo(() => boardData(board.rows, caption), [board.rows, caption]);
+  const caption = `${boardFigureWords[board.figure]}, ${board.ranking ? 'all ranked entries' : 'all entries taken on equal terms'}`;
+  const data = useMemo(() => boardData(board, caption), [board, caption]);
   if (board.rows.length === 0) {
     if (isFiltered(view)) {
       const clear = (): void => setSearch((before) => { const next = new URLSearchParams(before); for (const field of ['modality', 'provider', 'within']) next.delete(field); return next; });
       return <EmptyState level={2} title="Nothing matches these filters" act={<Button onClick={clear}>Take all entries</Button>}>No entry on this board matches all filters at once.</EmptyState>;
     }
     return board.gateClass.ranked
-      ? <EmptyState level={2} title="No entry in this gate class yet" act={<ButtonLink to="/method">How figures are made</ButtonLink>}>A board opens with its first two entries taken on equal terms.</EmptyState>
+      ? <EmptyState level={2} title="No entry in this gate class yet" act={<ButtonLink to="/method#ranks">How figures are made</ButtonLink>}>A board opens with its first two entries taken on equal terms.</EmptyState>
       : <EmptyState level={2} title="This class is never ranked">Its gates do not determine every figure, so its entries give predictions only. They are named below.</EmptyState>;
   }
   const demo = board.rows.filter((row) => row.demo).length;
@@ -31,8 +31,8 @@ export function BoardBody({ board }: { board: Board }) {
   return (
     <div className="flow">
       {demo > 0 ? <DemoNote some={demo < board.rows.length} /> : null}
-      {drawn ? <KeyLine /> : null}
-      {drawn ? <BoardRows rows={board.rows} data={data} caption={caption} quiet={readingWords(board.figure)} /> : <BoardTable rows={board.rows} decimals={data.decimals} caption={<>{caption} <span className="quiet">{readingWords(board.figure)}</span></>} />}
+      {drawn ? <KeyLine ranked={board.ranking !== null} /> : null}
+      {drawn ? <BoardRows board={board} data={data} caption={caption} quiet={readingWords(board.figure)} /> : <BoardTable rows={board.rows} ranking={board.ranking} decimals={data.decimals} caption={<>{caption} <span className="quiet">{readingWords(board.figure)}</span></>} />}
       <BoardDownloads board={board} data={data} view={view} />
     </div>
   );

@@ -1,24 +1,23 @@
-import { Link } from 'react-router-dom';
-import type { BoardRow } from '#shared/contracts/boards.ts';
-import { formatDate } from '#shared/domain/format-date.ts';
+import { useMemo } from 'react';
+import type { Board } from '#shared/contracts/boards.ts';
+import { formatLevel } from '#shared/domain/format.ts';
 import { AxisStrip } from '#web/charts/axis-strip.tsx';
-import { BeamPlot } from '#web/charts/beam-plot.tsx';
-import { FigureText } from '#web/charts/figure-beams.tsx';
-import { AccessionLink, entryPath, nameClass } from '#web/components/accession-link.tsx';
-import { DemoTag } from '#web/components/demo.tsx';
 import { tableRoles as r } from '#web/components/table-roles.ts';
-import { modalityWords } from '#web/lib/modality-words.ts';
-import { useOwnSelection } from '#web/lib/own-selection.ts';
 import type { BoardDrawingData } from '../board-data.ts';
+import { boardParts, rankedRows, tieWords } from '../board-parts.ts';
+import { BoardRowLine } from './board-row-line.tsx';
 
-/** The board drawn: one row an entry, one axis for all rows. */
-export function BoardRows({ rows, data, caption, quiet }: { rows: readonly BoardRow[]; data: BoardDrawingData; caption: string; quiet: string }) {
-  const own = useOwnSelection();
+/** The board drawn: one row an entry, one axis for all rows, cut into parts that can be told apart. */
+export function BoardRows({ board, data, caption, quiet }: { board: Pick<Board, 'rows' | 'ranking'>; data: BoardDrawingData; caption: string; quiet: string }) {
+  const { rows, ranking } = board;
+  const ranked = useMemo(() => rankedRows(rows), [rows]);
+  const parts = useMemo(() => (ranked ? boardParts(ranked) : []), [ranked]);
   return (
-    <table className="board" {...r.table}>
+    <table className={ranked ? 'board ranked' : 'board'} {...r.table}>
       <caption>{caption} <span className="quiet">{quiet}</span></caption>
       <thead {...r.group}>
         <tr {...r.row}>
+          {ranked && ranking ? <><th {...r.columnHead} scope="col" className="c-tie"><span className="unseen">Ties</span></th><th {...r.columnHead} scope="col" className="c-rank">Rank range<span className="unit">{formatLevel(ranking.level)} joint</span></th></> : null}
           <th {...r.columnHead} scope="col" className="c-name">Device</th>
           <th {...r.columnHead} scope="col" className="c-plot"><span className="unseen">Drawn interval</span><AxisStrip axis={data.axis} side="top" /></th>
           <th {...r.columnHead} scope="col" className="c-val">Estimate<span className="unit">95 % interval</span></th>
@@ -26,26 +25,13 @@ export function BoardRows({ rows, data, caption, quiet }: { rows: readonly Board
           <th {...r.columnHead} scope="col" className="c-own">Yours</th>
         </tr>
       </thead>
-      <tbody {...r.group}>
-        {rows.map((row) => {
-          const mine = own.has(row.accession);
-          return (
-            <tr key={row.accession} {...r.row} className={mine ? 'own' : undefined}>
-              <th {...r.rowHead} scope="row" className="c-name">
-                <Link className={nameClass(row.device.name)} to={entryPath(row.accession, row.version)}>{row.device.name}</Link>
-                <span className="sub">{row.device.provider.name}, {modalityWords[row.device.modality]}{row.demo ? <>; <DemoTag /></> : null}</span>
-              </th>
-              <td {...r.cell} className="c-plot"><BeamPlot axis={data.axis} value={row.figure.value} intervals={row.figure.intervals} own={mine} /></td>
-              <td {...r.cell} className="c-val"><FigureText figure={row.figure} decimals={data.decimals} /></td>
-              <td {...r.cell} className="c-entry"><AccessionLink accession={row.accession} version={row.version} /><span className="sub">{formatDate(row.lastCircuitAt)}</span></td>
-              <td {...r.cell} className="c-own">
-                <label className="ownbox"><input type="checkbox" checked={mine} onChange={() => own.toggle({ accession: row.accession, name: row.device.name })} /><span className="unseen">Mark {row.device.name} as yours</span></label>
-              </td>
-            </tr>
-          );
-        })}
-      </tbody>
-      <tfoot {...r.group}><tr {...r.row}><td {...r.cell} /><td {...r.cell} className="c-plot"><AxisStrip axis={data.axis} side="bottom" /></td><td {...r.cell} colSpan={3} /></tr></tfoot>
+      {ranked && ranking ? parts.map((part) => (
+        <tbody key={part.key} {...r.group}>
+          <tr {...r.row} className="grp"><th {...r.rowHead} scope="rowgroup" colSpan={7}><b>{part.title}</b> <span>{part.sentence}</span></th></tr>
+          {part.rows.map((row, at) => <BoardRowLine key={row.accession} row={row} data={data} place={{ at, brackets: part.brackets, ties: tieWords(row, ranked), places: ranking.entries }} />)}
+        </tbody>
+      )) : <tbody {...r.group}>{rows.map((row) => <BoardRowLine key={row.accession} row={row} data={data} />)}</tbody>}
+      <tfoot {...r.group}><tr {...r.row}><td {...r.cell} colSpan={ranked ? 3 : 1} /><td {...r.cell} className="c-plot"><AxisStrip axis={data.axis} side="bottom" /></td><td {...r.cell} colSpan={3} /></tr></tfoot>
     </table>
   );
 }

@@ -1,5 +1,5 @@
 /** How a row is drawn, in small, beside the sentence that says how to read it. */
-export function KeyLine() {
+export function KeyLine({ ranked }: { ranked: boolean }) {
   return (
     <div className="keyline">
       <div className="key" aria-hidden="true">
@@ -17,7 +17,9 @@ export function KeyLine() {
           </svg>
         </svg>
       </div>
-      <p className="says">Each row shows one entry on one axis for all: the dot is the estimate, the steps hold 50, 80 and 95 % of the uncertainty. Rows stand in the order of their estimates; the order carries no ranks yet, and two rows whose steps lie apart or overlap are not thereby better, worse or equal.</p>
+      <p className="says">Each row shows one entry on one axis for all: the dot is the estimate, the steps hold 50, 80 and 95 % of the uncertainty. {ranked
+        ? 'Two rows whose steps overlap may still differ, and two whose steps lie apart need not: read the rank ranges and the brackets. The order of rows inside a bracket carries no meaning.'
+        : 'Rows stand in the order of their estimates, which carries no ranks.'}</p>
     </div>
   );
 }

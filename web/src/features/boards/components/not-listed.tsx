@@ -33,11 +33,11 @@ export function NotListed({ items }: { items: readonly Left[] }) {
   const unequal = items.filter((item) => !onlyEarlier(item));
   if (items.length === 0) return null;
   return (
-    <Section title="Not listed" aside={countOf(items)} className="flow">
+    <Section title="Not ranked" aside={countOf(items)} className="flow">
       {unequal.length > 0 ? (
         <>
-          <p className="prose">These entries are public and can be cited. They are left off the board because they were not taken on equal terms, and each reason is given.</p>
-          <DataTable caption="Entries that are not listed, with the reason" captionHidden columns={columns} rows={unequal} rowKey={keyOf} tight />
+          <p className="prose">These entries are public and can be cited. They were not taken on equal terms and take no part in the ranking; each reason is given.</p>
+          <DataTable caption="Entries that are not ranked, with the reason" captionHidden columns={columns} rows={unequal} rowKey={keyOf} tight />
         </>
       ) : null}
       {earlier.length > 0 ? (
