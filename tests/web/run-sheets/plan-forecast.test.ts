@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { gateClassById } from '#shared/domain/gate-classes.ts';
+import { patchPlans } from '#shared/runsheet/sheet-plan.ts';
 import { gateClassAnswer } from '#tests/support/fixtures/desk-people.ts';
 import { cheapestPlan, circuitsToForecast, headlineWidth, plannerCurves } from '#web/features/run-sheets/plan-forecast.ts';
 import { forecastRows, gateListWords, timeWords, widthWords } from '#web/features/run-sheets/plan-words.ts';
@@ -23,7 +24,13 @@ describe('the size of a sheet', () => {
   it('counts patches of a chained register: pairs, single qubits of at least 200, and 40 circuits over all', () => {
     // three qubits, two pairs, 600 circuits: 2·600 + 3·200 open; 2·150 + 3·50 + 40 sealed (method M1, run sheets)
     expect(sheetSize(classOf('chained-cz-3q/1'), 600)).toEqual({ open: 1800, sealed: 490 });
-    expect(sheetSize(classOf('chained-cz-2q/1'), 1200)).toEqual({ open: 1200 + 2 * 400, sealed: 300 + 2 * 100 + 40 });
+    expect(sheetSize(classOf('chained-cz-2q/1'), 1200)).toEqual({ open: 1200 + 2 * 400, sealed: 300 + 2 * 100 });
+    // in a register of two the pair is the whole register
+    for (const id of ['chained-cz-2q/1', 'chained-cz-3q/1', 'chained-cz-5q/1', 'quarter-turn-cz-2q/1']) {
+      const plans = patchPlans(gateClassById(id)!, 777, true);
+      const sum = (of: 'estimated' | 'sealed') => plans.reduce((s, p) => s + p[of], 0);
+      expect(sheetSize(gateClassById(id)!, 777), id).toEqual({ open: sum('estimated'), sealed: sum('sealed') });
+    }
   });
 });
 
@@ -83,6 +90,19 @@ describe('a forecast on sample sheets', () => {
     const rows = forecastRows(unitForecast(half, 200, 0.01), 1000, classOf('half-turn-1q/1').gates);
     expect(rows.find((row) => row.name === 'Error per gate')?.width).toBeNull();
     expect(rows.find((row) => row.headline)?.width).toMatch(/^±0\.00/);
+  });
+});
+
+describe('a forecast of several qubits', () => {
+  it.each([['quarter-turn-cz-2q/1', 1200, 1023, 0.012], ['chained-cz-3q/1', 600, 240, 0.006]] as const)('%s: one row for each gate however many qubits have it, and the headline width at 1,000 shots', (id, circuits, rank, most) => {
+    const several = unitForecast(gateClassById(id)!, circuits, 0.01);
+    expect(several.rank).toBe(rank);
+    expect(headlineWidth(several, 1000)?.typical).toBeGreaterThan(most / 4);
+    expect(headlineWidth(several, 1000)?.typical).toBeLessThan(most);
+    const rows = forecastRows(several, 1000, classOf(id).gates);
+    expect(new Set(rows.map((row) => row.name)).size).toBe(rows.length);
+    expect(rows.filter((row) => row.name.startsWith('Gate loss')).map((row) => row.name)).toContain('Gate loss, cz');
+    expect(rows.find((row) => row.name === 'Gate loss, rx(π/2)')?.width).toMatch(/^±0\.00\d+ to ±0\.00\d+$/);
   });
 });
 

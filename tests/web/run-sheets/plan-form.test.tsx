@@ -1,6 +1,7 @@
 import { screen, waitFor } from '@testing-library/react';
 import userEvent from '@testing-library/user-event';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
+import type { GateClassSummary } from '#shared/contracts/gate-classes.ts';
 import { contributor, gateClassAnswer, hedge, meadow } from '#tests/support/fixtures/desk-people.ts';
 import { drawingSheet } from '#tests/support/fixtures/desk-submissions.ts';
 import { answerWith, drawAt, Refusal } from '#tests/web/desk/support.tsx';
@@ -85,13 +86,22 @@ describe('planning a run sheet', () => {
     expect(posts[1]?.headers.get('idempotency-key')).toBe(posts[0]?.headers.get('idempotency-key'));
   });
 
-  it('says plainly that a register of several qubits has no live forecast, and asks for each qubit’s name', async () => {
+  it('forecasts a register of three qubits too, and asks for each qubit’s name', async () => {
     const user = userEvent.setup();
     draw();
     await user.selectOptions(screen.getByLabelText('Gate class'), 'Chained CZ, three qubits');
-    expect(await screen.findByText(/^There is no live forecast for this class/)).toBeTruthy();
+    await waitFor(() => expect(screen.getByText(/This plan costs/).textContent).toContain('±0.0025'));
+    expect(screen.getByText('31 of 240 in every pair')).toBeTruthy();
     expect(['Qubit 0', 'Qubit 1', 'Qubit 2'].every((label) => screen.getByLabelText(label))).toBe(true);
-    expect(screen.queryByLabelText('Assumed readout error')).toBeNull();
     expect((screen.getByLabelText('Circuits') as HTMLInputElement).value).toBe('900');
+  });
+
+  it('says plainly that a register of more than five qubits has no live forecast', async () => {
+    const user = userEvent.setup();
+    const large: GateClassSummary = { ...gateClassAnswer.items.find((c) => c.id === 'chained-cz-5q/1')!, id: 'chained-cz-7q/1', title: 'Chained CZ, seven qubits', registerSize: 7 };
+    drawAt(<PlanForm devices={[meadow]} classes={[...gateClassAnswer.items, large]} addDevice={() => null} />);
+    await user.selectOptions(screen.getByLabelText('Gate class'), 'Chained CZ, seven qubits');
+    expect(await screen.findByText(/^There is no live forecast for this class/)).toBeTruthy();
+    expect(screen.queryByLabelText('Assumed readout error')).toBeNull();
   });
 });

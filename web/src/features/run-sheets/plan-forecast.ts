@@ -6,10 +6,14 @@ import { totalShots } from './sheet-size.ts';
 import type { UnitFigure, UnitForecast } from './unit-forecast.ts';
 
 /**
- * Sample sheets looked at for each number of circuits. Widths of single sheets of 200 circuits lie anywhere within a factor of two,
- * so one would mislead; a root mean square over seven also keeps the search for the cheapest plan from following a lucky draw.
+ * Sample sheets looked at for each number of circuits. Widths of single sheets of 200 circuits on one qubit lie anywhere within a
+ * factor of two, so one would mislead; a root mean square over seven also keeps the search for the cheapest plan from following a
+ * lucky draw. Larger sheets differ by a few per cent only, and take a second each: two.
  */
-export const sampleSheets = 7;
+export const samplesOf = ({ registerSize }: Pick<GateClassSummary, 'registerSize'>): number => (registerSize === 1 ? 7 : 2);
+
+/** Largest register that is forecast while the reader types: five qubits take two to four seconds a number of circuits. */
+export const largestForecast = 5;
 
 /** The depth at which plans are compared: that of the headline figure. */
 export const headlineDepth = 16;
@@ -45,12 +49,12 @@ export const cheapestPlan = (gateClass: GateClassSummary, units: Iterable<UnitFo
   return best;
 };
 
-/** Numbers of circuits tried for the cheapest plan, as multiples of the class's floor. */
-const steps = [1, 1.5, 2, 3, 4, 6, 8] as const;
+/** Numbers of circuits tried for the cheapest plan, as multiples of the class's floor; fewer where each takes seconds. */
+const stepsOf = ({ registerSize }: GateClassSummary): readonly number[] => (registerSize === 1 ? [1, 1.5, 2, 3, 4, 6, 8] : [1, 1.5, 2, 3, 4]);
 
 /** Numbers of circuits to forecast: the plan's own first, then its fourfold (for the drawing), then the ladder of the search. */
 export const circuitsToForecast = (gateClass: GateClassSummary, circuits: number): number[] => {
-  const ladder = steps.map((step) => Math.ceil(gateClass.floor.circuits * step));
+  const ladder = stepsOf(gateClass).map((step) => Math.ceil(gateClass.floor.circuits * step));
   return [...new Set([circuits, ...companions(gateClass, circuits), ...ladder])];
 };
 

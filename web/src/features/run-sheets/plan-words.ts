@@ -37,11 +37,21 @@ export interface ForecastRow {
   headline: boolean;
 }
 
-/** The forecast of one plan as rows: of the retained signals only that of the headline depth. */
-export const forecastRows = (unit: UnitForecast, shots: number, gates: GateClassSummary['gates']): ForecastRow[] =>
-  unit.figures.filter((f) => f.key !== 'retained-signal' || f.depth === headlineDepth).map((f) => ({
-    name: figureName(f, gates.find((g) => g.label === f.gate)?.words),
-    width: f.halfWidth ? widthWords(f.halfWidth.typical / Math.sqrt(shots)) : null,
-    dependsOn: dependsOn[f.key] ?? '',
-    headline: f.key === 'retained-signal',
-  }));
+/** "±0.0007", or "±0.0007 to ±0.0011" for a figure that stands for several qubits or pairs. */
+const rangeWords = (halfWidths: readonly number[]): string => [...new Set([Math.min(...halfWidths), Math.max(...halfWidths)].map(widthWords))].join(' to ');
+
+/** The forecast of one plan as rows: of the retained signals only that of the headline depth, and one row for a gate that several qubits or pairs have. */
+export const forecastRows = (unit: UnitForecast, shots: number, gates: GateClassSummary['gates']): ForecastRow[] => {
+  const rows = new Map<string, ForecastRow & { halfWidths: (number | null)[] }>();
+  for (const f of unit.figures) {
+    if (f.key === 'retained-signal' && f.depth !== headlineDepth) continue;
+    const name = figureName(f, gates.find((g) => g.label === f.gate)?.words);
+    const row = rows.get(name) ?? { name, width: null, dependsOn: dependsOn[f.key] ?? '', headline: f.key === 'retained-signal', halfWidths: [] };
+    row.halfWidths.push(f.halfWidth && f.halfWidth.typical / Math.sqrt(shots));
+    rows.set(name, row);
+  }
+  return [...rows.values()].map(({ halfWidths, ...row }) => {
+    const known = halfWidths.filter((w) => w !== null);
+    return { ...row, width: known.length === halfWidths.length ? rangeWords(known) : null };
+  });
+};

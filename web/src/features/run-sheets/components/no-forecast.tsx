@@ -5,7 +5,7 @@ import type { Plan } from '../plan-schema.ts';
 import { timeWords } from '../plan-words.ts';
 import { sheetSize, totalShots } from '../sheet-size.ts';
 
-/** The right column for classes of two and more qubits: the cost, and plainly no forecast. */
+/** The right column for registers too large to be forecast in a browser: the cost, and plainly no forecast. */
 export function NoForecast({ plan, gateClass }: { plan: Plan; gateClass: GateClassSummary }) {
   const cost = totalShots(gateClass, plan.circuits, plan.shots);
   const { open, sealed } = sheetSize(gateClass, plan.circuits);

@@ -11,7 +11,7 @@ import { Message } from '#web/components/message.tsx';
 import { newIdempotencyKey } from '#web/lib/api-client.ts';
 import { asApiError } from '#web/lib/api-error.ts';
 import { drawRunSheet } from '../api/run-sheets.ts';
-import { cheapestPlan, circuitsToForecast } from '../plan-forecast.ts';
+import { cheapestPlan, circuitsToForecast, largestForecast } from '../plan-forecast.ts';
 import { planSchema, type Plan, type PlanFields as Fields } from '../plan-schema.ts';
 import { useForecast } from '../use-forecast.ts';
 import { ForecastPanel } from './forecast-panel.tsx';
@@ -40,7 +40,7 @@ export function PlanForm({ devices, classes, addDevice }: PlanFormProps) {
   });
   const fields = useWatch({ control: form.control }) as Fields;
   const gateClass = classes.find((c) => c.id === fields.gateClass);
-  const live = gateClass?.registerSize === 1;
+  const live = gateClass !== undefined && gateClass.registerSize <= largestForecast;
   const [adding, setAdding] = useState(devices.length === 0);
   useClassDefaults(form, gateClass);
 
