@@ -9,6 +9,7 @@ import { rateLimits } from './middleware/rate-limits.ts';
 import { securityHeaders } from './middleware/security-headers.ts';
 import { sessions } from './middleware/session.ts';
 import { clientFiles, schemaFiles } from './middleware/static-files.ts';
+import { landingPages } from './modules/landing/pages.ts';
 import { signInPages } from './modules/session/sign-in-pages.ts';
 import { routes as allRoutes } from './routes.ts';
 
@@ -38,6 +39,7 @@ export const createApp = (deps: Deps, routes: readonly Route[] = allRoutes): App
   app.use(signInPages(deps, limits['sign-in']));
   mountRoutes(app, routes, deps, limits);
   app.use('/schema', schemaFiles(config.schemaRoot));
+  app.use(landingPages(deps, limits.read));
   app.use(clientFiles(config.webRoot));
   app.use(nothingHere);
   app.use(problems(log));

@@ -3,6 +3,7 @@ import { cffText } from './cff.ts';
 import { cslText } from './csl.ts';
 import { dataciteXml } from './datacite-xml.ts';
 import { dataciteText } from './datacite.ts';
+import type { CitationFormatName } from './format-names.ts';
 import { risText } from './ris.ts';
 import type { CitationRecord } from './record.ts';
 
@@ -14,9 +15,6 @@ export interface CitationFormat {
   extension: string;
   write: (record: CitationRecord) => string;
 }
-
-export const citationFormatNames = ['bibtex', 'ris', 'csl', 'cff', 'datacite', 'datacite-xml'] as const;
-export type CitationFormatName = (typeof citationFormatNames)[number];
 
 /** Every form in which a citation is given out. */
 export const citationFormats: Readonly<Record<CitationFormatName, CitationFormat>> = {

@@ -14,7 +14,7 @@ const ask = (...args: Parameters<ReturnType<typeof asStranger>>) => asStranger(t
 
 describe('the built client', () => {
   it('answers every page address, help pages and /schema included, and is asked for anew each time', async () => {
-    for (const path of ['/', '/entries/EVB-000042', '/problems/not-found', '/schema', '/schema/dataset']) {
+    for (const path of ['/', '/boards/quarter-turn-1q/1', '/problems/not-found', '/schema', '/schema/dataset']) {
       const answer = await ask('get', path).set('accept', 'text/html').expect(200);
       expect(answer.text).toContain('the page');
       expect(answer.headers['cache-control']).toBe('no-cache');
