@@ -1,10 +1,13 @@
 import type { Misfit } from '#shared/formats/types.ts';
-import { multiplyFour } from '#shared/linalg/sparse.ts';
+import { SparseProduct } from '#shared/linalg/sparse-product.ts';
 import { withoutLast } from '#shared/method/frequencies.ts';
 import type { PatchProblem } from '#shared/method/patch-problem.ts';
 import { MultinomialTable } from '#shared/random/multinomial.ts';
 import type { Xoshiro256 } from '#shared/random/xoshiro256.ts';
 import { moments } from '#shared/stats/moments.ts';
+
+/** Groups of four draws taken through the inverse together. */
+const GROUPS = 8;
 
 /**
  * Misfit: S = Σ over circuits and all outcomes of (f − p̂)², unweighted, against a parametric bootstrap: f_b drawn from p̂
@@ -22,38 +25,27 @@ export function misfitOf(problem: PatchProblem, predicted: Float64Array, draws: 
   for (let i = 0; i < observed.length; i++) residualSum += (observed[i]! - predicted[i]!) * (observed[i]! - predicted[i]!);
   const table = new MultinomialTable(clipped(predicted, shots, d), shots, d);
   const { rows, columns } = inverse;
-  const x = new Float64Array(4 * rows);
-  const y = new Float64Array(4 * columns);
-  const fitted = new Float64Array(4 * rows);
+  const x = new Float64Array(GROUPS * rows * 4);
+  const y = new Float64Array(GROUPS * columns * 4);
+  const fitted = new Float64Array(GROUPS * rows * 4);
+  const product = new SparseProduct(design);
   const centre = withoutLast(predicted, circuits, d);
+  const drawn = new Float64Array(rows);
   const sums: number[] = [];
-  for (let from = 0; from < draws; from += 4) {
-    const here = Math.min(4, draws - from);
+  for (let from = 0; from < draws; from += 4 * GROUPS) {
+    const here = Math.min(4 * GROUPS, draws - from);
+    const groups = Math.ceil(here / 4);
     x.fill(0);
     const kept: boolean[] = [];
-    for (let l = 0; l < here; l++) {
-      table.draw(generator, x, l, 4);
-      const own = centreOf ? centreOf(from + l) : centre;
+    for (let r = 0; r < here; r++) {
+      table.draw(generator, drawn, 0, 1);
+      const own = centreOf ? centreOf(from + r) : centre;
       kept.push(own !== null);
-      for (let i = 0; i < rows; i++) x[4 * i + l]! -= own?.[i] ?? 0;
+      if (own) for (let i = 0, at = (r >> 2) * rows * 4 + (r & 3); i < rows; i++, at += 4) x[at] = drawn[i]! - own[i]!;
     }
-    inverse.apply(x, y, 1);
-    multiplyFour(design, y, 0, fitted, 0);
-    for (let l = 0; l < here; l++) {
-      if (!kept[l]) continue;
-      let sum = 0;
-      for (let c = 0; c < circuits; c++) {
-        let last = 0;
-        for (let o = 0; o < d - 1; o++) {
-          const i = 4 * (c * (d - 1) + o) + l;
-          const r = x[i]! - fitted[i]!;
-          last -= r;
-          sum += r * r;
-        }
-        sum += last * last;
-      }
-      sums.push(sum);
-    }
+    inverse.apply(x, y, groups);
+    product.apply(y, fitted, groups);
+    for (let r = 0; r < here; r++) if (kept[r]) sums.push(squaredResidual(x, fitted, (r >> 2) * rows * 4 + (r & 3), circuits, d));
   }
   const { mean, deviation } = moments(sums);
   const made = sums.length;
@@ -63,6 +55,21 @@ export function misfitOf(problem: PatchProblem, predicted: Float64Array, draws: 
     residualSum, expected: mean, sigmas: deviation > 0 ? (residualSum - mean) / deviation : 0,
     pValue: Math.min(1, (2 * Math.min(above + 1, made + 1 - above)) / (made + 1)),
   };
+}
+
+/** Σ over circuits and all outcomes of (x − fitted)², one of four interleaved vectors; the last outcome is what the others leave. */
+function squaredResidual(x: Float64Array, fitted: Float64Array, at: number, circuits: number, d: number): number {
+  let sum = 0;
+  for (let c = 0, i = at; c < circuits; c++) {
+    let last = 0;
+    for (let o = 0; o < d - 1; o++, i += 4) {
+      const r = x[i]! - fitted[i]!;
+      last -= r;
+      sum += r * r;
+    }
+    sum += last * last;
+  }
+  return sum;
 }
 
 function clipped(predicted: Float64Array, shots: Float64Array, d: number): Float64Array {
