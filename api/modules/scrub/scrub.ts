@@ -1,3 +1,4 @@
+import { checkAdded } from './check-added.ts';
 import { checkBytes } from './check-bytes.ts';
 import { checkRevealedSeals, checkSheets, checkSubmitted } from './check-files.ts';
 import { checkLogTree } from './check-log.ts';
@@ -9,6 +10,7 @@ import type { ScrubCheck, ScrubContext, Scrubbed } from './finding.ts';
 const checks: readonly { name: string; run: ScrubCheck }[] = [
   { name: 'files of frozen versions', run: checkBytes },
   { name: 'rows of frozen versions', run: checkRecords },
+  { name: 'results added by campaigns', run: checkAdded },
   { name: 'states of frozen versions', run: checkStates },
   { name: 'leaves, subtrees and heads of the log', run: checkLogTree },
   { name: 'run sheets and their seals', run: checkSheets },

@@ -1,9 +1,13 @@
 import { createHash } from 'node:crypto';
 import pg from 'pg';
-import { beforeAll, describe, expect, it } from 'vitest';
+import { beforeAll, describe, expect, inject, it } from 'vitest';
+import { adminRole } from '#api/cli/postgres/cluster.ts';
+import { addressOf } from '#api/cli/postgres/roles.ts';
+import { testPasswords } from '#api/cli/postgres/test-cluster.ts';
 import { runItem } from '#api/modules/campaigns/run-item.ts';
 import { startCampaign } from '#api/modules/campaigns/service.ts';
 import { readSheetSeal } from '#api/modules/run-sheets/sheet-store.ts';
+import { checkAdded } from '#api/modules/scrub/check-added.ts';
 import { versionResults } from '#shared/contracts/methods.ts';
 import { gateClassById } from '#shared/domain/gate-classes.ts';
 import { canonicalJson, contentIdOf } from '#shared/formats/canonical-json.ts';
@@ -121,6 +125,29 @@ describe('a board by method version', () => {
 
   it('refuses a version that this registry does not have', async () => {
     expect(await board('?method=M9')).toMatchObject({ status: 400, detail: expect.stringContaining('"M9"') as string });
+  });
+});
+
+describe('the scrub', () => {
+  const findings = async () => (await checkAdded({ em: app().deps.orm.em.fork(), trustedKeys: [] })).findings;
+  /** As a superuser who puts the triggers out of action. */
+  const tamper = async (set: string): Promise<void> => {
+    const address = addressOf(adminRole, testPasswords.admin, inject('postgresPort'), app().database.name);
+    await as(address, 'alter table entry_result disable trigger all');
+    await as(address, `update entry_result set ${set}`);
+  };
+  const flip = 'set_byte(COLUMN, 20, get_byte(COLUMN, 20) # 1)';
+
+  it.each([
+    ['a byte of the result', `result = ${flip.replaceAll('COLUMN', 'result')}`, null, /^Its result has the SHA-256/],
+    ['a byte of the replicates', `replicates = ${flip.replaceAll('COLUMN', 'replicates')}`, null, /^Its replicates have the SHA-256/],
+    ['the figures that pages show', `summary = jsonb_set(summary, '{figures,0,value}', '2')`, `summary = jsonb_set(summary, '{figures,0,value}', to_jsonb((convert_from(result, 'UTF8')::jsonb #> '{figures,0,value}')))`, /^The figures that pages show/],
+  ])('finds that %s was changed past the triggers', async (_what, change, back, sentence) => {
+    expect(await findings()).toEqual([]);
+    await tamper(change);
+    expect(await findings()).toMatchObject([{ where: `${accession}.1 by M2`, sentence: expect.stringMatching(sentence) as string }]);
+    await tamper(back ?? change);
+    expect(await findings()).toEqual([]);
   });
 });
 
