@@ -1,6 +1,6 @@
-/** Asks the registry how it is until it answers "ok"; gives up after half a minute. */
-export const waitForHealth = async (base: string): Promise<void> => {
-  const until = Date.now() + 30_000;
+/** Asks the registry how it is until it answers "ok"; gives up after two minutes: a machine busy with other work takes half a minute to load it. */
+export const waitForHealth = async (base: string, patienceMs = 120_000): Promise<void> => {
+  const until = Date.now() + patienceMs;
   let last = 'no answer';
   while (Date.now() < until) {
     try {
@@ -12,5 +12,5 @@ export const waitForHealth = async (base: string): Promise<void> => {
     }
     await new Promise((resolve) => setTimeout(resolve, 100));
   }
-  throw new Error(`The registry at ${base} did not become healthy within 30 s: ${last}`);
+  throw new Error(`The registry at ${base} did not become healthy within ${patienceMs / 1000} s: ${last}`);
 };
