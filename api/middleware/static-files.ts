@@ -5,13 +5,15 @@ import { AppError } from '#shared/errors/app-error.ts';
 
 const year = 'public, max-age=31536000, immutable';
 const version = /^\d+(\.\d+\.\d+(\.schema)?)?\.json$/;
+/** Files of a conformance vector; the index beside them grows. */
+const vector = /[\\/]conformance[\\/]M\d+[\\/][a-z0-9-]+[\\/][a-z-]+\.json$/;
 
 const schemaHeaders = (response: Response, path: string): void => {
   const name = basename(path);
   if (name.endsWith('.schema.json')) response.type('application/schema+json');
   else if (name.endsWith('.md')) response.type('text/markdown; charset=utf-8');
   // A published version never changes; examples and guides may be reworded.
-  response.set({ 'cache-control': version.test(name) ? year : 'public, max-age=3600', 'access-control-allow-origin': '*', 'cross-origin-resource-policy': 'cross-origin' });
+  response.set({ 'cache-control': version.test(name) || vector.test(path) ? year : 'public, max-age=3600', 'access-control-allow-origin': '*', 'cross-origin-resource-policy': 'cross-origin' });
 };
 
 /** The open formats under the paths they have in the repository. */

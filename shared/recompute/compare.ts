@@ -28,14 +28,15 @@ function compareParts(frozen: Result, again: Result, { register }: Pick<Dataset,
   const { patches, figures, sealedCheck, warnings, predictions, ...head } = frozen;
   const { patches: patchesAgain, figures: figuresAgain, sealedCheck: checkAgain, warnings: warningsAgain, predictions: predictionsAgain, ...headAgain } = again;
   const names = (qubits: readonly number[]): string => qubits.map((q) => register[q] ?? String(q)).join(', ');
+  const counts = [part('Number of figures', '/figures/length', figures.length, figuresAgain.length), part('Number of patches', '/patches/length', patches.length, patchesAgain.length)];
   return [
     part('Method, dataset, replicates, sealed circuits', '', head, headAgain),
-    part('Number of figures', '/figures/length', figures.length, figuresAgain.length),
     ...patches.map((patch, i) => part(`Design, misfit and error maps of ${names(patch.qubits)}`, `/patches/${i}`, patch, patchesAgain[i] ?? null)),
-    part('Number of patches', '/patches/length', patches.length, patchesAgain.length),
     part('Sealed check', '/sealedCheck', sealedCheck, checkAgain),
     part('Predictions', '/predictions', predictions, predictionsAgain),
     part('Warnings', '/warnings', warnings, warningsAgain),
+    // More of them on one side is a difference that no part above would show.
+    ...counts.filter(({ agreement }) => agreement !== 'identical'),
   ];
 }
 

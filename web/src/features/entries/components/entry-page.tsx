@@ -4,6 +4,7 @@ import { countInWords, joinWords, plural } from '#shared/domain/format.ts';
 import { Section } from '#web/components/section.tsx';
 import { Wrap } from '#web/components/wrap.tsx';
 import { AllFiguresSection } from './all-figures-section.tsx';
+import { CiteSection } from './cite-section.tsx';
 import { DepthSection } from './depth-section.tsx';
 import { EntryHead } from './entry-head.tsx';
 import { EntryNotices } from './entry-notices.tsx';
@@ -27,6 +28,7 @@ export function EntryPage({ entry }: { entry: Entry }) {
         <AllFiguresSection entry={entry} />
         <ProvenanceSection entry={entry} />
         <RecomputeSection entry={entry} />
+        <CiteSection entry={entry} />
         <VersionsSection entry={entry} />
         <Section title="Caution">
           <p className="prose">Results hold for {plural(register.length, 'qubit')} {joinWords(register)}, the {countInWords(gates.length)} {plural(gates.length, 'gate')} named and {formatDate(provenance.startedAt)}{formatDate(provenance.endedAt) === formatDate(provenance.startedAt) ? '' : ` to ${formatDate(provenance.endedAt)}`}. They do not replace acceptance testing under a contract. The model has no leakage and no drift; small negative eigenvalues of the estimated maps are normal within noise.</p>

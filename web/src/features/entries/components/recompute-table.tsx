@@ -22,7 +22,7 @@ export function RecomputedFigures({ entry, comparison }: { entry: Entry; compari
   return (
     <details className="allfigures" open>
       <summary>{count}, frozen and recomputed</summary>
-      <DataTable caption={`${entry.accession}.${entry.version}: each figure as frozen and as this browser recomputed it`} captionHidden columns={columns} rows={comparison.figures} rowKey={keyOf} tight
+      <DataTable caption={`${entry.accession}.${entry.version}: each figure as frozen and as this browser recomputed it`} captionHidden columns={columns} rows={comparison.figures} rowKey={keyOf} tight stack={false}
         rowClass={({ agreement }) => (agreement === 'differs' ? 'unlike' : undefined)} />
     </details>
   );
