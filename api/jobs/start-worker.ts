@@ -1,5 +1,6 @@
 import PgBoss from 'pg-boss';
 import type { Deps } from '#api/lib/deps.ts';
+import { runSql } from '#api/lib/run-sql.ts';
 import type { Job } from './define-job.ts';
 import { beginRun, endRun } from './job-runs.ts';
 import { recoverLostRuns } from './recover-lost-runs.ts';
@@ -41,7 +42,11 @@ export const startWorker = async (deps: Deps, jobs: readonly Job[], options: Wor
     const outcome = await runAttempt({ job, row, deps, signal: stopping.signal });
     // The queue is told first: a crash between the two lines leaves a note to tidy, never a job done twice.
     if (outcome.kind === 'done') await boss.complete(job.name, row.id);
-    else await boss.fail(job.name, row.id, { message: outcome.reason });
+    else {
+      // A stop is nobody's fault: it takes no attempt away, or the last one would end without being given up.
+      if (outcome.kind === 'lost') await runSql(em, 'update pgboss.job set retry_limit = retry_limit + 1 where name = $1 and id = $2', [job.name, row.id]);
+      await boss.fail(job.name, row.id, { message: outcome.reason });
+    }
     await endRun(em, clock, row.id, outcome.kind, outcome.kind === 'done' ? null : outcome.reason);
   };
 

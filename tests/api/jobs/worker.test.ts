@@ -72,6 +72,20 @@ describe('jobs', () => {
     await vi.waitFor(() => expect(seen).toEqual(['first', 'second']), soon);
   });
 
+  it('stopped on their last attempt are finished by the next worker all the same', async () => {
+    const seen: string[] = [];
+    const id = await test().deps.queue.send('estimate', { submission: 'S-000008', round: 1 });
+    await test().deps.pool.query('update pgboss.job set retry_limit = 0 where id = $1', [id]);
+    const first = await work([estimate(async ({ signal }) => {
+      seen.push('first');
+      await new Promise((_, reject) => signal.addEventListener('abort', () => reject(new Error('told to stop'))));
+    })]);
+    await vi.waitFor(() => expect(seen).toEqual(['first']), soon);
+    await first.stop();
+    await work([estimate(async () => void seen.push('second'))]);
+    await vi.waitFor(() => expect(seen).toEqual(['first', 'second']), soon);
+  });
+
   it('of a worker process that is killed are taken up by another', async () => {
     await test().deps.queue.send('estimate', { submission: 'S-000006', round: 1 });
     const child = spawn(process.execPath, ['--import', 'tsx', '--disable-warning=DeprecationWarning', 'tests/support/job-process.ts', test().database.url], { stdio: 'inherit' });
