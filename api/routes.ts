@@ -10,6 +10,7 @@ import { landingRoutes } from './modules/landing/routes.ts';
 import { logRoutes } from './modules/log/routes.ts';
 import { methodRoutes } from './modules/methods/routes.ts';
 import { officeRoutes } from './modules/office/routes.ts';
+import { opinionRoutes } from './modules/opinions/routes.ts';
 import { reviewRoutes } from './modules/reviews/routes.ts';
 import { runSheetRoutes } from './modules/run-sheets/routes.ts';
 import { sessionRoutes } from './modules/session/routes.ts';
@@ -18,5 +19,5 @@ import { tokenRoutes } from './modules/tokens/routes.ts';
 
 /** Every route of the API. A route that is not in this list does not exist; one in it has a rule. */
 export const routes: readonly Route[] = [
-  ...healthRoutes, ...sessionRoutes, ...gateClassRoutes, ...boardRoutes, ...entryRoutes, ...citationRoutes, ...landingRoutes, ...deviceRoutes, ...runSheetRoutes, ...submissionRoutes, ...reviewRoutes, ...tokenRoutes, ...logRoutes, ...methodRoutes, ...campaignRoutes, ...officeRoutes,
+  ...healthRoutes, ...sessionRoutes, ...gateClassRoutes, ...boardRoutes, ...entryRoutes, ...citationRoutes, ...landingRoutes, ...deviceRoutes, ...runSheetRoutes, ...submissionRoutes, ...reviewRoutes, ...opinionRoutes, ...tokenRoutes, ...logRoutes, ...methodRoutes, ...campaignRoutes, ...officeRoutes,
 ];

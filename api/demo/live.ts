@@ -43,9 +43,12 @@ const foreseen = (deps: OwnedDeps, orders: readonly SheetOrder[], outcomes: Read
   };
 };
 
-/** Nothing is left to the worker, which would find these jobs done; only what rests at "checking" waits there for a day. */
+/** Little is left to the worker, which would find most jobs done: what rests at "checking" waits there for a day, and second opinions are made later. */
 const demoQueue = (deps: OwnedDeps, rests: () => boolean): Queue => ({
-  send: async (name, data, options) => (name === 'estimate' && rests() ? deps.queue.send(name, data, { ...options, startAfter: new Date(Date.now() + 86_400_000) }) : null),
+  send: async (name, data, options) => {
+    if (name === 'opinions') return deps.queue.send(name, data, options);
+    return name === 'estimate' && rests() ? deps.queue.send(name, data, { ...options, startAfter: new Date(Date.now() + 86_400_000) }) : null;
+  },
   isUp: () => deps.queue.isUp(),
   stop: async () => undefined,
 });

@@ -4,6 +4,7 @@ import type { Message } from '#shared/contracts/submissions.ts';
 import type { SealedPoint } from '#shared/contracts/entries.ts';
 import type { DatasetSummary } from '#api/modules/submissions/dataset-summary.ts';
 import type { ResultSummary } from '#api/modules/submissions/result-summary.ts';
+import type { SheetKind } from '#shared/domain/sheet-kinds.ts';
 import { instant, uuidKey } from './columns.ts';
 import { Device } from './device.ts';
 import { Organisation } from './organisation.ts';
@@ -35,6 +36,8 @@ export const EntryVersion = defineEntity({
     gateClass: p.string(),
     register: p.json<string[]>(),
     runSheetId: p.string().nullable(),
+    /** How the circuits of that sheet were drawn. Read from the sheet, which does not change once it is drawn. */
+    runSheetKind: p.string().$type<SheetKind>().formula((alias) => `(select s.kind from run_sheet s where s.id = ${alias}.run_sheet_id)`).nullable(),
     title: p.string(),
     method: p.string(),
     replicates: p.integer(),

@@ -12,6 +12,7 @@ import { Membership } from './membership.ts';
 import { Organisation } from './organisation.ts';
 import { RoleGrant } from './role-grant.ts';
 import { RunSheet } from './run-sheet.ts';
+import { SecondOpinion } from './second-opinion.ts';
 import { SubmissionEstimate } from './submission-estimate.ts';
 import { SubmissionFile } from './submission-file.ts';
 import { SubmissionMessage } from './submission-message.ts';
@@ -22,5 +23,5 @@ import { User } from './user.ts';
 /** Every entity, listed by hand so that a bundle needs no folder scan. */
 export const entities = [
   User, Organisation, Membership, RoleGrant, ApiToken, AuditEvent, IdempotencyKey, JobRun, MailMessage,
-  Device, RunSheet, Submission, SubmissionFile, SubmissionEstimate, SubmissionMove, SubmissionMessage, Decision, EntryVersion, EntryStateRow, Campaign,
+  Device, RunSheet, Submission, SubmissionFile, SubmissionEstimate, SecondOpinion, SubmissionMove, SubmissionMessage, Decision, EntryVersion, EntryStateRow, Campaign,
 ];

@@ -1,4 +1,5 @@
 import { defineEntity, p, type InferEntity } from '@mikro-orm/core';
+import type { SheetKind } from '#shared/domain/sheet-kinds.ts';
 import { instant } from './columns.ts';
 import { Device } from './device.ts';
 import { Organisation } from './organisation.ts';
@@ -17,6 +18,7 @@ export const RunSheet = defineEntity({
     device: () => p.manyToOne(Device).ref(),
     gateClass: p.string(),
     register: p.json<string[]>(),
+    kind: p.string().$type<SheetKind>().default('random'),
     circuitsAsked: p.integer(),
     shots: p.integer(),
     state: p.string().$type<(typeof runSheetStates)[number]>(),

@@ -15,6 +15,8 @@ const usual: QueueOptions = { retryLimit: 3, retryDelay: 2, retryBackoff: true, 
 
 /** Where a queue differs from the usual. A mail server may be away for hours: 12 tries span about two. */
 const special: Partial<Record<QueueName, Partial<QueueOptions>>> = {
+  // They give way to estimates, for hours on a busy day.
+  opinions: { expireInSeconds: 6 * 60 * 60 },
   'deliver-mail': { retryLimit: 12, expireInSeconds: 5 * 60 },
   // The campaign notes what failed for good, and a steward may have it tried again.
   're-estimate': { retryLimit: 2 },

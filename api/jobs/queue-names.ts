@@ -9,6 +9,7 @@ export const queues = {
   're-estimate': z.object({ campaign: z.string(), entryVersion: z.uuid() }),
   'advance-campaigns': z.object({}),
   'register-dois': z.object({}),
+  opinions: z.object({ submission: z.string(), estimate: z.uuid() }),
   'house-keeping': z.object({}),
 } as const;
 

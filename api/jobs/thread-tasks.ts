@@ -3,6 +3,7 @@ import { checkDataset, type CheckDatasetInput } from './tasks/check-dataset.ts';
 import { drawRunSheetTask, type DrawSheetInput } from './tasks/draw-sheet.ts';
 import { estimateDataset, type EstimateDatasetInput } from './tasks/estimate-dataset.ts';
 import { inspectDataset } from './tasks/inspect-dataset.ts';
+import { secondOpinions, type SecondOpinionsInput } from './tasks/second-opinions.ts';
 import type { ThreadProgress } from './threads.ts';
 
 type Report = (progress: ThreadProgress) => void;
@@ -28,6 +29,8 @@ export const threadTasks = {
   'check-dataset': async (input: CheckDatasetInput) => checkDataset(input),
   /** The official estimate with the review's diagnostics. */
   'estimate-dataset': async (input: EstimateDatasetInput, report: Report) => estimateDataset(input, report),
+  /** Second opinions by some of the other routes. */
+  'second-opinions': async (input: SecondOpinionsInput, report: Report) => secondOpinions(input, report),
   /** Rank ranges of a board with many entries. */
   'rank-ranges': async (input: { entries: RankEntry[]; better: 'higher' | 'lower'; level: number }) => rankRanges(input.entries, input.better, input.level),
 };

@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { sheetKinds } from '#shared/domain/sheet-kinds.ts';
 import { deviceRef, gateClassRef, sha256, timestamp } from './common.ts';
 
 /** POST /api/v1/run-sheets : the registry draws; a job with progress. */
@@ -7,6 +8,8 @@ export const runSheetCreate = z.object({
   gateClass: z.string().max(80),
   /** Names of the qubits, in the order of the register. */
   register: z.array(z.string().trim().min(1).max(40)).min(1).max(8),
+  /** random: gate by gate, as ranked entries need it. structured: preparation sequence, repeated block, readout sequence. */
+  kind: z.enum(sheetKinds).default('random'),
   /** Circuits to estimate from; the sealed ones come on top. */
   circuits: z.number().int().min(1).max(20_000),
   shots: z.number().int().min(1).max(10_000_000),
@@ -21,6 +24,7 @@ export const runSheetView = z.object({
   device: deviceRef,
   gateClass: gateClassRef,
   register: z.array(z.string()),
+  kind: z.enum(sheetKinds),
   circuitsAsked: z.number().int(),
   /** More than asked where no sheet of that many circuits was sound. */
   circuits: z.number().int().nullable(),
@@ -43,4 +47,4 @@ export const runSheetView = z.object({
 export const runSheetList = z.object({ items: z.array(runSheetView), nextCursor: z.string().nullable() });
 
 export type RunSheetView = z.infer<typeof runSheetView>;
-export type RunSheetCreate = z.infer<typeof runSheetCreate>;
+export type RunSheetCreate = z.input<typeof runSheetCreate>;

@@ -2,10 +2,11 @@ import type { Figure, FigureKey } from '#shared/formats/types.ts';
 import { domainReason } from './domain-reason.ts';
 import type { FigureDomain } from './figure-domain.ts';
 import type { EntryState } from './life-cycle.ts';
+import type { SheetKind } from './sheet-kinds.ts';
 
 /** Why an entry is left off its board, and what would change that. */
 export interface Reason {
-  code: 'class-unranked' | 'old' | 'own-design' | 'design' | 'ambiguous' | 'unsettled' | 'no-sealed-check' | 'sealed-check' | 'floor' | 'domain' | 'no-figure' | 'newer' | 'withdrawn';
+  code: 'class-unranked' | 'old' | 'own-design' | 'structured' | 'design' | 'ambiguous' | 'unsettled' | 'no-sealed-check' | 'sealed-check' | 'floor' | 'domain' | 'no-figure' | 'newer' | 'withdrawn';
   sentence: string;
   remedy: string;
 }
@@ -27,6 +28,8 @@ export interface EligibilityFacts {
   gateClass: { id: string; kind: 'joint' | 'chained'; ranked: boolean; floor: { circuits: number; shots: number } } | null;
   /** The run sheet that was matched circuit by circuit; null for a design of the contributor's own. */
   runSheet: string | null;
+  /** How that sheet was drawn; random unless told. */
+  runSheetKind?: SheetKind | null;
   patches: readonly PatchFacts[];
   sealedCheck: { passed: boolean } | null;
   figures: readonly Figure[];
@@ -71,6 +74,7 @@ export const ineligibility = (facts: EligibilityFacts, domains: readonly FigureD
     facts.state === 'withdrawn' && { code: 'withdrawn', sentence: 'The entry was withdrawn.', remedy: 'A new dataset.' },
     !facts.gateClass?.ranked && { code: 'class-unranked', sentence: facts.gateClass ? 'This gate class is never ranked: its gates do not determine every figure.' : 'The gates are not those of a ranked gate class.', remedy: 'A run sheet of a ranked gate class.' },
     facts.runSheet === null && { code: 'own-design', sentence: 'The circuits are the contributor’s own design, not a run sheet.', remedy: 'A run sheet drawn by the registry.' },
+    facts.runSheetKind === 'structured' && { code: 'structured', sentence: 'The run sheet is structured: its circuits repeat blocks. Boards compare entries whose circuits were drawn gate by gate.', remedy: 'A random run sheet of this gate class.' },
     facts.patches.some((p) => !p.complete || !p.sound) && { code: 'design', sentence: 'The circuits do not determine all that this gate class asks for.', remedy: 'A run sheet drawn by the registry: its design is sound before it is handed out.' },
     facts.patches.some((p) => p.rankAmbiguous) && { code: 'ambiguous', sentence: 'The rank of the design depends on where small singular values are cut off.', remedy: 'More circuits, of more lengths.' },
     facts.patches.some((p) => !p.settled) && { code: 'unsettled', sentence: 'The estimate did not settle: the gate errors are beyond what the eight passes can follow.', remedy: 'Shorter circuits, or a quieter device.' },

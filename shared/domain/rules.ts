@@ -54,6 +54,9 @@ export const rules = {
   'submission.cancel': { standings: ['contributor'], states: [...editable, 'in-review'], token: true },
   'submission.write-message': { standings: ['contributor', 'curator'], states: [...editable, 'in-review', 'accepted', 'embargoed', 'frozen', 'superseded'], curatorStates: sent, token: true },
 
+  // Other routes to the figures, for who decides; public once the entry is. A contributor is judged by the official figures alone.
+  'opinion.read': { standings: ['curator', 'steward'], curatorStates: sent },
+
   'review.queue': { standings: ['curator'] },
   'review.read': { standings: ['curator'] },
   'review.claim': { standings: ['curator'], states: underReview },

@@ -1,3 +1,4 @@
+import type { SheetKind } from '#shared/domain/sheet-kinds.ts';
 import { AppError } from '#shared/errors/app-error.ts';
 import type { GateClass, RunSheet, SheetCircuit } from '#shared/formats/types.ts';
 import type { FactorStore } from '#shared/method/factors.ts';
@@ -6,7 +7,7 @@ import type { Xoshiro256 } from '#shared/random/xoshiro256.ts';
 import { sheetStream } from '#shared/runsheet/draw-circuits.ts';
 import { canBeSound, drawPatch, isSound, unsealed } from '#shared/runsheet/draw-patch.ts';
 import { commitmentOf } from '#shared/runsheet/seal.ts';
-import { patchPlans, type PatchPlan, type SheetKind } from '#shared/runsheet/sheet-plan.ts';
+import { patchPlans, type PatchPlan } from '#shared/runsheet/sheet-plan.ts';
 
 export interface DrawRequest {
   gateClass: GateClass;

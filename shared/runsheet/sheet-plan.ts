@@ -1,10 +1,8 @@
+import type { SheetKind } from '#shared/domain/sheet-kinds.ts';
 import { AppError } from '#shared/errors/app-error.ts';
 import type { GateClass, GateDeclaration } from '#shared/formats/types.ts';
 import { structuredPlan, type StructuredPlan } from '#shared/runsheet/structured-plan.ts';
 
-/** How the circuits of a sheet are drawn: gate by gate, or as preparation sequence, repeated block and readout sequence. */
-export const sheetKinds = ['random', 'structured'] as const;
-export type SheetKind = (typeof sheetKinds)[number];
 
 /** What is drawn for one patch of a sheet. */
 export interface PatchPlan {

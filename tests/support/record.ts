@@ -8,6 +8,7 @@ import { createDevice } from '#api/modules/devices/service.ts';
 import { createRunSheet } from '#api/modules/run-sheets/service.ts';
 import { runSql } from '#api/lib/run-sql.ts';
 import { gateClassById } from '#shared/domain/gate-classes.ts';
+import type { SheetKind } from '#shared/domain/sheet-kinds.ts';
 import { canonicalJson, sha256Hex } from '#shared/formats/canonical-json.ts';
 import type { Dataset, DatasetCircuit, RunSheet, SheetCircuit } from '#shared/formats/types.ts';
 import { binomial } from '#shared/random/binomial.ts';
@@ -68,13 +69,13 @@ export interface DrawnSheet {
 }
 
 /** A drawn sheet of quarter turns, made without the drawing job: `circuits` to estimate from and a quarter more sealed. */
-export const makeDrawnSheet = async (app: TestApp, desk: Desk, given: { circuits?: number; shots?: number; seed?: number } = {}): Promise<DrawnSheet> => {
-  const { circuits = 200, shots = 500, seed = (serial += 1) } = given;
+export const makeDrawnSheet = async (app: TestApp, desk: Desk, given: { circuits?: number; shots?: number; seed?: number; kind?: SheetKind } = {}): Promise<DrawnSheet> => {
+  const { circuits = 200, shots = 500, seed = (serial += 1), kind = 'random' } = given;
   const work = await workFor(app, desk.contributor);
-  const { id } = await createRunSheet(work, { device: desk.device.id, gateClass: 'quarter-turn-1q/1', register: ['q3'], circuits: 200, shots });
+  const { id } = await createRunSheet(work, { device: desk.device.id, gateClass: 'quarter-turn-1q/1', register: ['q3'], circuits: 200, shots, kind });
   let secrets = seed;
   const drawn = drawSheet({
-    gateClass: quarterTurns(), register: ['q3'], circuits, shots, seed: String(seed).padStart(64, '0'),
+    gateClass: quarterTurns(), register: ['q3'], circuits, shots, kind, seed: String(seed).padStart(64, '0'),
     issued: { id, device: { provider: desk.organisation.name, name: desk.device.name }, drawnAt: app.clock.now().toISOString() },
     newSecret: () => Uint8Array.from({ length: 32 }, (_, i) => ((secrets += 1) * 53 + i * 17 + 5) % 256),
   });

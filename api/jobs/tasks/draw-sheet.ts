@@ -1,5 +1,6 @@
 import { randomBytes } from 'node:crypto';
 import { gateClassById } from '#shared/domain/gate-classes.ts';
+import type { SheetKind } from '#shared/domain/sheet-kinds.ts';
 import { AppError } from '#shared/errors/app-error.ts';
 import { canonicalJson, sha256Hex } from '#shared/formats/canonical-json.ts';
 import type { RunSheet, Seal } from '#shared/formats/types.ts';
@@ -13,6 +14,8 @@ export interface DrawSheetInput {
   gateClass: string;
   device: { provider: string; name: string };
   register: string[];
+  /** Random unless told. */
+  kind?: SheetKind;
   circuits: number;
   shots: number;
   drawnAt: string;
@@ -52,7 +55,7 @@ export const drawRunSheetTask = (input: DrawSheetInput, report: (progress: Threa
   const store = taskFactors();
   try {
     const drawn = drawSheet({
-      gateClass, register: input.register, circuits: input.circuits, shots: input.shots, seed: Buffer.from(random(seedBytes)).toString('hex'),
+      gateClass, register: input.register, ...(input.kind ? { kind: input.kind } : {}), circuits: input.circuits, shots: input.shots, seed: Buffer.from(random(seedBytes)).toString('hex'),
       issued: { id: input.id, device: input.device, drawnAt: input.drawnAt },
       newSecret: () => new Uint8Array(random(32)), factors: store,
       onProgress: ({ draws, circuits, fraction }) => report({ stage: `Draw ${draws + 1}, ${circuits} circuits to estimate from`, fraction }),

@@ -9,7 +9,7 @@ import type { PublicVersion } from '#api/modules/entries/public-entries.ts';
 
 /** A public version with as much of its row as standing on a board asks for. */
 export interface Candidate extends Pick<PublicVersion, 'accession' | 'version' | 'state' | 'frozenAt'> {
-  row: Pick<EntryVersion, 'gateClass' | 'register' | 'runSheetId' | 'endedAt' | 'summary' | 'dataset'> & { device: { id: string } };
+  row: Pick<EntryVersion, 'gateClass' | 'register' | 'runSheetId' | 'runSheetKind' | 'endedAt' | 'summary' | 'dataset'> & { device: { id: string } };
 }
 
 const nameOf = (c: Candidate): string => versionedAccessionOf(c.accession, c.version);
@@ -23,9 +23,9 @@ const isNewer = (a: Candidate, b: Candidate): boolean => {
   return a.frozenAt.getTime() !== b.frozenAt.getTime() ? a.frozenAt > b.frozenAt : nameOf(a) > nameOf(b);
 };
 
-/** The newest dataset from a run sheet of the same class, device and register, if it is another than this one. Withdrawn ones do not count. */
+/** The newest dataset from a random run sheet of the same class, device and register, if it is another than this one. Withdrawn ones do not count. */
 const newerThan = (candidate: Candidate, all: readonly Candidate[]): Candidate | null => {
-  const rivals = all.filter((other) => other.state !== 'withdrawn' && other.row.runSheetId !== null && place(other) === place(candidate) && isNewer(other, candidate));
+  const rivals = all.filter((other) => other.state !== 'withdrawn' && other.row.runSheetId !== null && other.row.runSheetKind !== 'structured' && place(other) === place(candidate) && isNewer(other, candidate));
   return rivals.reduce<Candidate | null>((newest, other) => (newest === null || isNewer(other, newest) ? other : newest), null);
 };
 
@@ -36,6 +36,7 @@ export const reasonsAgainst = (candidate: Candidate, all: readonly Candidate[], 
   return ineligibility({
     gateClass: gateClassById(row.gateClass),
     runSheet: row.runSheetId ?? null,
+    runSheetKind: row.runSheetKind ?? null,
     patches: row.summary.patches.map((patch) => {
       const counted = row.summary.counts.find((c) => c.qubits.join() === patch.qubits.join());
       return { qubits: patch.qubits, complete: patch.complete, sound: patch.sound, rankAmbiguous: patch.rankAmbiguous, settled: patch.settled, circuits: counted?.estimated ?? 0, shots: counted?.minShots ?? 0 };

@@ -54,7 +54,7 @@ export const drawRunSheet = async (work: Work, id: string, options: DrawOptions 
   try {
     const drawn = await work.runInThread(
       'draw-sheet',
-      { id, gateClass: sheet.gateClass, device: { provider: device.organisation.unwrap().name, name: device.name }, register: sheet.register, circuits: sheet.circuitsAsked, shots: sheet.shots, drawnAt: drawnAt.toISOString() },
+      { id, gateClass: sheet.gateClass, device: { provider: device.organisation.unwrap().name, name: device.name }, register: sheet.register, ...(sheet.kind === 'random' ? {} : { kind: sheet.kind }), circuits: sheet.circuitsAsked, shots: sheet.shots, drawnAt: drawnAt.toISOString() },
       { ...(options.signal ? { signal: options.signal } : {}), ...(options.onProgress ? { onProgress: options.onProgress } : {}) },
     );
     if (drawn.ok) return await keep(work, id, drawnAt, drawn);

@@ -24,6 +24,7 @@ export const presentRunSheet = (s: RunSheet, submission: string | null): RunShee
   device: presentDevice(s.device.unwrap()),
   gateClass: presentClassRef(s.gateClass) ?? { id: s.gateClass, title: gateClassById(s.gateClass)?.title ?? s.gateClass, ranked: false },
   register: s.register,
+  kind: s.kind,
   circuitsAsked: s.circuitsAsked,
   circuits: s.circuits ?? null,
   sealed: s.sealed ?? null,

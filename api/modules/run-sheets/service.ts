@@ -1,6 +1,8 @@
 import { gateClassById } from '#shared/domain/gate-classes.ts';
+import type { SheetKind } from '#shared/domain/sheet-kinds.ts';
 import { runSheetIdOf, runSheetPattern } from '#shared/domain/ids.ts';
 import { AppError } from '#shared/errors/app-error.ts';
+import { canBeStructured, structuredRefusal } from '#shared/runsheet/sheet-plan.ts';
 import { Device } from '#api/entities/device.ts';
 import { RunSheet } from '#api/entities/run-sheet.ts';
 import { requireActor } from '#api/lib/actor.ts';
@@ -12,6 +14,8 @@ export interface RunSheetInput {
   device: string;
   gateClass: string;
   register: string[];
+  /** How circuits are drawn; random unless told. */
+  kind?: SheetKind;
   /** Circuits to estimate from; the sealed ones come on top. */
   circuits: number;
   shots: number;
@@ -36,6 +40,7 @@ const refuse = (input: RunSheetInput): void => {
   if (!gateClass) details.push({ pointer: '/gateClass', message: `There is no gate class ${JSON.stringify(input.gateClass)}.` });
   else {
     if (input.register.length !== gateClass.registerSize) details.push({ pointer: '/register', message: `This gate class has ${gateClass.registerSize} ${gateClass.registerSize === 1 ? 'qubit' : 'qubits'}; ${input.register.length} ${input.register.length === 1 ? 'is' : 'are'} named.` });
+    if (input.kind === 'structured' && !canBeStructured(gateClass)) details.push({ pointer: '/kind', message: structuredRefusal(gateClass) });
     if (input.circuits < gateClass.floor.circuits) details.push({ pointer: '/circuits', message: `${input.circuits} is below the floor of ${gateClass.floor.circuits} for this gate class.` });
     if (input.shots < gateClass.floor.shots) details.push({ pointer: '/shots', message: `${input.shots} is below the floor of ${gateClass.floor.shots} for this gate class.` });
   }
@@ -53,7 +58,7 @@ export const createRunSheet = (work: Work, input: RunSheetInput): Promise<RunShe
     const device = await findDeviceById(tx, input.device);
     const id = runSheetIdOf(await nextNumber(em, 'run_sheet_number'));
     const sheet = em.create(RunSheet, {
-      id, organisation: device.organisation, device, gateClass: input.gateClass, register: input.register, circuitsAsked: input.circuits, shots: input.shots, state: 'waiting', progress: 0, message: null,
+      id, organisation: device.organisation, device, gateClass: input.gateClass, register: input.register, kind: input.kind ?? 'random', circuitsAsked: input.circuits, shots: input.shots, state: 'waiting', progress: 0, message: null,
       createdBy: actor.userId, createdAt: clock.now(), drawnAt: null, circuits: null, sealed: null, totalShots: null, rank: null, conditionRatio: null, draws: null, sheetSha256: null, sealSha256: null,
     });
     recordAudit(em, { at: clock.now(), action: 'run-sheet.create', subjectType: 'run-sheet', subjectId: id, ...(tx.caller ? { caller: tx.caller } : {}), organisationId: device.organisation.id, requestId: tx.requestId ?? null, detail: { ...input } });

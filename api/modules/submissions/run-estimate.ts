@@ -12,6 +12,7 @@ import { runSql } from '#api/lib/run-sql.ts';
 import { inTransaction, type Work } from '#api/lib/work.ts';
 import { keepFactors, readFactors } from '#api/modules/run-sheets/factor-store.ts';
 import { readSheet, readSheetSeal } from '#api/modules/run-sheets/sheet-store.ts';
+import { oweOpinions } from '#api/modules/opinions/owe-opinions.ts';
 import { readBytes } from './file-store.ts';
 import { block, lockSubmission, pass } from './life-cycle.ts';
 import { findDevice } from './place.ts';
@@ -61,7 +62,10 @@ const finish = (work: Work, id: string, round: number, checks: Check[], device: 
     tx.em.assign(submission, { checks, device, stage: null, progress: 1, replicatesDone: estimated?.output.summary.replicates ?? null });
     const stopped = checks.find((c) => c.blocking && c.status === 'failed');
     if (stopped) await block(tx, submission, `${stopped.title}: ${stopped.detail}`);
-    else await pass(tx, submission);
+    else {
+      await pass(tx, submission);
+      if (estimated) await oweOpinions(tx, id, estimated.id);
+    }
     return true;
   });
 

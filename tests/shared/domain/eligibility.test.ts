@@ -28,6 +28,7 @@ describe('eligibility for a board', () => {
   it.each<[string, EligibilityFacts]>([
     ['class-unranked', { ...good, gateClass: { ...good.gateClass!, ranked: false } }],
     ['own-design', { ...good, runSheet: null }],
+    ['structured', { ...good, runSheetKind: 'structured' }],
     ['design', patch({ sound: false })],
     ['design', patch({ complete: false })],
     ['ambiguous', patch({ rankAmbiguous: true })],
