@@ -16,7 +16,7 @@ export default defineConfig({
     // Stopping the database takes longer than the usual ten seconds on a busy machine.
     teardownTimeout: 60_000,
     projects: [
-      { test: { name: 'pure', include: ['tests/{shared,schema,architecture,reference,cli}/**/*.test.ts'], exclude: [routeRules], environment: 'node', pool: 'forks', execArgv, setupFiles, testTimeout: 60_000 } },
+      { test: { name: 'pure', include: ['tests/{shared,schema,architecture,reference,cli,studies}/**/*.test.ts'], exclude: [routeRules], environment: 'node', pool: 'forks', execArgv, setupFiles, testTimeout: 60_000 } },
       { test: { name: 'api', include: api, environment: 'node', pool: 'forks', execArgv, globalSetup: ['tests/support/postgres-global.ts'], setupFiles, testTimeout: 120_000, hookTimeout: 120_000 } },
       { test: { name: 'web', include: ['tests/web/**/*.test.{ts,tsx}'], environment: 'jsdom', setupFiles: [...setupFiles, 'tests/support/web-setup.ts'], testTimeout: 30_000 } },
       { test: { name: 'e2e', include: ['tests/e2e/**/*.test.ts'], environment: 'node', pool: 'forks', execArgv, fileParallelism: false, globalSetup: ['tests/support/postgres-global.ts'], testTimeout: 180_000, hookTimeout: 180_000 } },

@@ -70,8 +70,15 @@ function drawFrequencies(table: MultinomialTable, circuits: number, d: number, s
 
 const clip = (p: Float64Array): Float64Array => p.map((v) => Math.min(1, Math.max(0, v)));
 
+/** What a comparison does otherwise than the study. */
+export interface ChunkOptions {
+  passes?: number;
+  /** Counts in its own way. */
+  tally?: Tally;
+}
+
 /** Trials of a class with one patch: the method's own steps, the design and its inverse made once for the chunk. */
-export function runJointChunk(cell: Cell, gateClass: GateClass, generator: Xoshiro256): Found {
+export function runJointChunk(cell: Cell, gateClass: GateClass, generator: Xoshiro256, _chunk = 0, { passes: count = PASSES, tally = new Tally() }: ChunkOptions = {}): Found {
   const { gates } = gateClass;
   const qubits = Array.from({ length: gateClass.registerSize }, (_, q) => q);
   const device = makeDevice(gates, qubits.length, cell.noise, cell.coherent, generator);
@@ -110,7 +117,6 @@ export function runJointChunk(cell: Cell, gateClass: GateClass, generator: Xoshi
   // Read once at the truth, so that the eigenvalues of every trial start from the same place.
   sealedCounts = draw(1);
   const fixed = counted.map(({ plan }) => plan.read(truth));
-  const tally = new Tally();
   const found: Found = { trials: cell.chunk, settled: 0, stopped: 0, passed: 0, loss: Math.max(...own.loss.map((p) => p.read(truth))), figures: [] };
   const reader = new Reader(set, reading.circuits);
   const maps = emptyMaps(set);
@@ -118,7 +124,7 @@ export function runJointChunk(cell: Cell, gateClass: GateClass, generator: Xoshi
     const counts = draw(0);
     sealedCounts = draw(1);
     const problem: PatchProblem = { ...posed, counts, observed: withoutLast(counts.observed, counts.circuits, set.d), smoothed: withoutLast(counts.smoothed, counts.circuits, set.d) };
-    const passes = runPasses(problem, problem.observed, PASSES);
+    const passes = runPasses(problem, problem.observed, count);
     const replicates = drawReplicates(problem, passes, cell.replicates, generator);
     if (passes.settled) found.settled++;
     if (passes.stopped) found.stopped++;

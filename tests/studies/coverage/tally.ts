@@ -34,6 +34,12 @@ const nameOf = (f: FigureName): string => JSON.stringify([f.key, f.depth, f.gate
 /** Gathers, trial by trial, whether the truth lay inside. */
 export class Tally {
   private readonly found = new Map<string, FigureTally>();
+  private readonly intervals: typeof studyIntervals;
+
+  /** @param intervals the method's own unless told */
+  constructor(intervals: typeof studyIntervals = studyIntervals) {
+    this.intervals = intervals;
+  }
 
   /** @param distance reflected interval @param replicates not sorted; values that are not finite are left out */
   add(name: FigureName, truth: number, estimate: number, replicates: Float64Array, distance: boolean, settled: boolean): void {
@@ -42,7 +48,7 @@ export class Tally {
     const tally = this.of(name);
     tally.trials++;
     if (settled) tally.settled[0]++;
-    studyIntervals(kept, estimate, distance).forEach(({ low, high }, i) => {
+    this.intervals(kept, estimate, distance).forEach(({ low, high }, i) => {
       const inside = truth >= low && truth <= high;
       if (inside) tally.inside[i]!++;
       if (i < 2) return;
