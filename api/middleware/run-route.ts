@@ -21,10 +21,19 @@ const rawBody = (request: Request, types: readonly string[]): RawBody => {
   return { stream: request, contentType, contentEncoding, contentLength: length === undefined ? null : Number(length) };
 };
 
+/** A reader who leaves before the end is no fault of ours, and nothing is left to answer. */
+const streamTo = async (body: Readable, response: Response): Promise<void> => {
+  try {
+    await pipeline(body, response);
+  } catch (fault) {
+    if ((fault as NodeJS.ErrnoException).code !== 'ERR_STREAM_PREMATURE_CLOSE' || !response.closed) throw fault;
+  }
+};
+
 const send = async (route: Route, answer: unknown, response: Response): Promise<void> => {
   if (answer instanceof BytesReply) {
     response.status(answer.options.status ?? route.status).set(answer.options.headers ?? {}).type(answer.contentType);
-    if (answer.body instanceof Readable) await pipeline(answer.body, response);
+    if (answer.body instanceof Readable) await streamTo(answer.body, response);
     else response.send(typeof answer.body === 'string' ? answer.body : Buffer.from(answer.body));
     return;
   }

@@ -1,9 +1,10 @@
 import type { SealedPoint } from '#shared/contracts/entries.ts';
 import type { BlockMisfit } from '#shared/domain/checks.ts';
 import { canonicalJson, sha256Hex } from '#shared/formats/canonical-json.ts';
+import { littleEndianBytes } from '#shared/formats/float64.ts';
 import type { PlainCircuit, Seal } from '#shared/formats/types.ts';
 import { estimate } from '#shared/method/estimate.ts';
-import type { EstimateProgress, ReplicateTable } from '#shared/method/types.ts';
+import type { EstimateProgress } from '#shared/method/types.ts';
 import { summariseResult, type ResultSummary } from '#api/modules/submissions/result-summary.ts';
 import { driftOf } from './drift.ts';
 import { readStored } from './read-stored.ts';
@@ -45,13 +46,6 @@ export interface EstimateReport {
 /** Share of the whole at which each stage of the method begins, and how much it takes; measured on one-qubit datasets. */
 const spans: Readonly<Record<EstimateProgress['stage'], [from: number, span: number]>> = { design: [0.02, 0.03], inverse: [0.05, 0.05], passes: [0.1, 0.05], replicates: [0.15, 0.45], figures: [0.6, 0.3] };
 
-const littleEndian = ({ values }: ReplicateTable): Uint8Array => {
-  const bytes = new Uint8Array(values.length * 8);
-  const view = new DataView(bytes.buffer);
-  values.forEach((x, i) => view.setFloat64(8 * i, x, true));
-  return bytes;
-};
-
 /** The estimate of a stored dataset, and beside it what the review looks at: drift by block, sealed circuits one by one. */
 export const estimateDataset = ({ bytes, seal, replicates, factors, method }: EstimateDatasetInput, report: (progress: EstimateReport) => void): EstimateDatasetOutput => {
   report({ stage: 'design', fraction: 0.01 });
@@ -66,7 +60,7 @@ export const estimateDataset = ({ bytes, seal, replicates, factors, method }: Es
   report({ stage: 'diagnostics', fraction: 0.9 });
   const sealed = new Set(seal?.sealed ?? []);
   const canonical = new TextEncoder().encode(canonicalJson(result));
-  const stored = littleEndian(table);
+  const stored = littleEndianBytes(table.values);
   return {
     result: canonical,
     resultSha256: sha256Hex(canonical),
