@@ -37,6 +37,6 @@ export const standingWords = (campaign: Pick<CampaignView, 'state' | 'counts' | 
 /** Names of the queues in words. */
 export const queueWords: Readonly<Record<string, string>> = {
   estimate: 'Checks and estimates of submissions', 'draw-sheet': 'Drawing of run sheets', 'lift-embargoes': 'Ends of embargoes', 'deliver-mail': 'Mail', 're-estimate': 'Campaign estimates',
-  'advance-campaigns': 'Handing out of campaigns', 'house-keeping': 'House-keeping', 'register-dois': 'Registration of DOIs',
+  'advance-campaigns': 'Handing out of campaigns', 'house-keeping': 'House-keeping', 'register-dois': 'Registration of DOIs', opinions: 'Second opinions',
 };
 export const queueName = (name: string): string => queueWords[name] ?? name;
