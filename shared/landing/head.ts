@@ -4,14 +4,14 @@ import { linksetUrl, type Landing } from './landing.ts';
 import { jsonForScript, toSchemaOrg } from './schema-org.ts';
 import { typedLinks } from './links.ts';
 
-const meta = (name: string, content: string): string => `<meta name="${name}" content="${escapeXml(content)}">`;
-const link = (rel: string, href: string, type?: string): string => `<link rel="${rel}" href="${escapeXml(href)}"${type ? ` type="${escapeXml(type)}"` : ''}>`;
+const meta = (name: string, content: string): string => `<meta data-served name="${name}" content="${escapeXml(content)}">`;
+const link = (rel: string, href: string, type?: string): string => `<link data-served rel="${rel}" href="${escapeXml(href)}"${type ? ` type="${escapeXml(type)}"` : ''}>`;
 
-/** The marks of a version's page for machines, to stand in its head. Every value is escaped for where it stands. */
+/** The marks of a version's page for machines, to stand in its head; `data-served` lets the client take them away when it goes on to another page. */
 export const headOf = (landing: Landing): string => {
   const { record } = landing;
   return [
-    `<title>${escapeXml(`${record.device.name}, ${nameOf(record)}`)} | ${publisher}</title>`,
+    `<title data-served>${escapeXml(`${record.device.name}, ${nameOf(record)}`)} | ${publisher}</title>`,
     meta('description', abstractOf(record)),
     link('canonical', pageUrl(record)),
     meta('citation_title', citedTitle(record)),
@@ -24,7 +24,7 @@ export const headOf = (landing: Landing): string => {
     ...typedLinks(landing).filter(({ rel }) => rel !== 'type').map(({ rel, href, type }) => link(rel, href, type)),
     link('linkset', linksetUrl(record), 'application/linkset+json'),
     link('alternate', `${record.registry}/feed.atom`, 'application/atom+xml'),
-    `<script type="application/ld+json">${jsonForScript(toSchemaOrg(landing))}</script>`,
+    `<script data-served type="application/ld+json">${jsonForScript(toSchemaOrg(landing))}</script>`,
   ].join('\n    ');
 };
 

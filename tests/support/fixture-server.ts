@@ -2,6 +2,7 @@ import { readFile } from 'node:fs/promises';
 import { createServer, type Server } from 'node:http';
 import { extname, join, normalize } from 'node:path';
 import { boardFixture, boardListFixture, differenceFixture, emptyBoardFixture } from './fixtures/boards.ts';
+import { citationFixture } from './fixtures/citations.ts';
 import { deviceFixture, deviceListFixture } from './fixtures/devices.ts';
 import { entryFixture, entryListFixture } from './fixtures/entries.ts';
 import { versionResultsFixture } from './fixtures/method-results.ts';
@@ -19,6 +20,7 @@ export const publicAnswers = (path: string, search: URLSearchParams): unknown =>
   if (path === '/api/v1/boards/quarter-turn-1q/1/difference') return differenceFixture;
   if (path === '/api/v1/entries') return search.get('q') === 'nothing' ? { items: [], nextCursor: null } : entryListFixture;
   if (/^\/api\/v1\/entries\/EVB-000042\/v\/\d+\/results$/.test(path)) return versionResultsFixture;
+  if (/^\/api\/v1\/entries\/EVB-000042\/v\/\d+\/citation$/.test(path)) return citationFixture;
   if (path.startsWith('/api/v1/entries/EVB-000042')) return path.endsWith('/v/1') ? { ...entryFixture, version: 1, state: 'superseded' } : entryFixture;
   if (path === '/api/v1/devices') return deviceListFixture;
   if (path === '/api/v1/devices/meadow-5') return deviceFixture;

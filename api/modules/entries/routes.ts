@@ -69,9 +69,9 @@ export const entryRoutes: Route[] = [
     method: 'get',
     path: '/api/v1/entries/:accession/v/:version/archive',
     action: 'public.read',
-    summary: 'One zip file with dataset, run sheet, seal, result, replicates and their digests; the same version always gives the same bytes.',
+    summary: 'One zip file with dataset, run sheet, seal, result, replicates, their digests and RO-Crate metadata; the same version always gives the same bytes.',
     params: versionParams,
     produces: ['application/zip'],
-    handler: async ({ em, params, header }) => readArchive(em, params.accession, params.version, header('if-none-match')),
+    handler: async ({ em, params, header, deps }) => readArchive(em, params.accession, params.version, header('if-none-match'), deps.config.publicUrl),
   }),
 ];

@@ -93,7 +93,9 @@ describe('the archive of an entry', () => {
   it('holds every file with its digest, in fixed order, and has the same bytes each time', async () => {
     const [first, second] = [await fetched(`/api/v1/entries/${accession}/v/1/archive`), await fetched(`/api/v1/entries/${accession}/v/1/archive`)];
     expect(sha256Hex(first)).toBe(sha256Hex(second));
-    expect(Object.keys(archive)).toEqual(['entry.json', 'dataset.json', 'run-sheet.json', 'seal.json', 'result.json', 'replicates.f64', 'sha256sums.txt']);
+    const names = Object.keys(archive);
+    expect(names.slice(0, 6)).toEqual(['entry.json', 'dataset.json', 'run-sheet.json', 'seal.json', 'result.json', 'replicates.f64']);
+    expect(names.at(-1)).toBe('sha256sums.txt');
     const listed = new TextDecoder().decode(archive['sha256sums.txt']).trim().split('\n').map((line) => line.split('  '));
     expect(listed).toEqual(Object.entries(archive).filter(([name]) => name !== 'sha256sums.txt').map(([name, bytes]) => [sha256Hex(bytes), name]));
     for (const [kind, name] of [['dataset', 'dataset.json'], ['run-sheet', 'run-sheet.json'], ['seal', 'seal.json'], ['result', 'result.json'], ['replicates', 'replicates.f64']] as const)

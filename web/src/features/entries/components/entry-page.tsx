@@ -9,6 +9,7 @@ import { DepthSection } from './depth-section.tsx';
 import { EntryHead } from './entry-head.tsx';
 import { EntryNotices } from './entry-notices.tsx';
 import { GatesSection } from './gates-section.tsx';
+import { OpinionsSection } from './opinions-section.tsx';
 import { ProvenanceSection } from './provenance-section.tsx';
 import { RecomputeSection } from './recompute-section.tsx';
 import { SealedSection } from './sealed-section.tsx';
@@ -26,6 +27,7 @@ export function EntryPage({ entry }: { entry: Entry }) {
         <GatesSection entry={entry} />
         <SealedSection entry={entry} />
         <AllFiguresSection entry={entry} />
+        <OpinionsSection entry={entry} />
         <ProvenanceSection entry={entry} />
         <RecomputeSection entry={entry} />
         <CiteSection entry={entry} />
