@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { intervalAt } from '#shared/domain/figure-words.ts';
 import { depthDrawing } from '#web/features/entries/depth-data.ts';
-import { angleNotes, fileTitle, headlineOf } from '#web/features/entries/entry-words.ts';
+import { angleNotes, fileTitle, headlineOf, misfitNotes } from '#web/features/entries/entry-words.ts';
 import { gateFigures } from '#web/features/entries/gate-rows.ts';
 import { sealedDrawing } from '#web/features/entries/sealed-data.ts';
 import { entryFixture } from '#tests/support/fixtures/entries.ts';
@@ -79,6 +79,25 @@ describe('gate figures', () => {
     ]);
     const wide = { ...entryFixture, figures: [makeFigure('angle-error', 0.003, 0.0021, { gate: 'a' })] };
     expect(angleNotes(wide)).toEqual([]);
+  });
+
+  it('draws angles together where there are more than three, and names the gates', () => {
+    const gates = ['a', 'b', 'c', 'd'].map((label, q) => ({ label, words: 'rx(π/2)', targets: [q] }));
+    const entry = { ...entryFixture, register: ['q0', 'q1', 'q2', 'q3'], gates, figures: gates.map(({ label }, q) => makeFigure('angle-error', q === 3 ? -0.012 : 0.012, 0.001, { gate: label })) };
+    expect(angleNotes(entry).map((n) => `${n.gate} ${n.sentence}`)).toEqual([
+      'rx(π/2) on q0, rx(π/2) on q1 and rx(π/2) on q2 turn too far: the 95\u202f% intervals of their angle errors leave out zero.',
+      'rx(π/2) on q3 turns too little: the 95\u202f% interval of its angle error leaves out zero.',
+    ]);
+  });
+
+  it('says the misfit of many patches in one sentence, and of each that is out of range in its own', () => {
+    const [patch] = entryFixture.patches;
+    const patches = [-0.4, 1.2, 0.3, -1.5, 3.1].map((sigmas, q) => ({ ...patch!, qubits: [q], misfit: { ...patch!.misfit!, sigmas } }));
+    expect(misfitNotes({ patches, register: ['q0', 'q1', 'q2', 'q3', 'q4'] })).toEqual([
+      ' of four of the five patches, over the circuits of the estimate: from \u22121.5 to +1.2 standard deviations from what the estimate leads one to expect. No sign of drift.',
+      ' of q4 over the circuits of the estimate: +3.1 standard deviations from what the estimate leads one to expect. Outside the 99 % range: drift, leakage, crosstalk, or counts that are not counts.',
+    ]);
+    expect(misfitNotes({ patches: patches.slice(0, 1), register: ['q0'] })[0]).toMatch(/^ over the circuits of the estimate: \u22120\.4/);
   });
 });
 

@@ -9,7 +9,9 @@ import type { GateFigures } from '../gate-rows.ts';
 
 type EntryFigure = Entry['figures'][number];
 
-function FigureCells({ figure, axis, decimals, scale = 'plain', name }: { figure: EntryFigure | null; axis: Axis; decimals: number; scale?: Scale; name: string }) {
+function FigureCells({ figure, axis, decimals, scale = 'plain', name, brief = false }: { figure: EntryFigure | null; axis: Axis; decimals: number; scale?: Scale; name: string; brief?: boolean }) {
+  // Half of a register's gates have no angle: the reason stands once beside the table.
+  if (brief && hasNoAngle(figure)) return <td {...r.cell} colSpan={2} className="nd" data-l={name}><span className="undetermined">Not defined.</span></td>;
   if (!figure || figure.value === null) {
     return <td {...r.cell} colSpan={2} className="nd" data-l={name}><span className="undetermined">Not determined by this gate set.</span> <span className="sub">{figure?.reason}</span></td>;
   }
@@ -23,6 +25,9 @@ function FigureCells({ figure, axis, decimals, scale = 'plain', name }: { figure
     </>
   );
 }
+
+/** Not a lack of data: nothing turns. */
+export const hasNoAngle = (figure: EntryFigure | null): boolean => figure !== null && figure.value === null && (figure.reason ?? '').startsWith('not defined');
 
 const determined = (figure: EntryFigure | null): boolean => figure !== null && figure.value !== null;
 
@@ -51,7 +56,7 @@ export function GateTable({ figures, register = false }: { figures: GateFigures;
           <tr key={row.label} {...r.row}>
             <th {...r.rowHead} scope="row" className="row">{row.words}</th>
             <FigureCells figure={row.loss} axis={loss.axis} decimals={loss.decimals} scale="thousandths" name="Gate loss" />
-            <FigureCells figure={row.angle} axis={angle.axis} decimals={angle.decimals} name="Angle error" />
+            <FigureCells figure={row.angle} axis={angle.axis} decimals={angle.decimals} name="Angle error" brief={register} />
           </tr>
         ))}
       </tbody>

@@ -4,7 +4,7 @@ import { figureName, figureRange, figureValue } from '#shared/domain/figure-word
 import { Section } from '#web/components/section.tsx';
 import { angleNotes, qubitNames } from '../entry-words.ts';
 import { gateFigures } from '../gate-rows.ts';
-import { GateTable } from './gate-table.tsx';
+import { GateTable, hasNoAngle } from './gate-table.tsx';
 
 /** Figures of the register that stand for themselves, in this order. */
 const standing = ['error-per-gate', 'readout-loss', 'output-error'] as const;
@@ -14,10 +14,11 @@ export function GatesSection({ entry }: { entry: Entry }) {
   const figures = useMemo(() => gateFigures(entry), [entry]);
   const single = standing.flatMap((key) => entry.figures.filter((f) => f.key === key && (f.depth === null || f.depth === 16)));
   const notes = angleNotes(entry);
+  const several = entry.register.length > 1;
   return (
     <Section title="Gates and readout" aside="Figures that no choice of gauge can alter." className="flow"
-      notes={<>{notes.map((note) => <p key={note.gate}><strong>{note.gate}</strong> {note.sentence}</p>)}<p>Gate loss hardly sees a small wrong angle, which is why the two are shown apart.</p></>}>
-      <GateTable figures={figures} register={entry.register.length > 1} />
+      notes={<>{notes.map((note) => <p key={note.gate}><strong>{note.gate}</strong> {note.sentence}</p>)}{several && figures.rows.some((row) => hasNoAngle(row.angle)) ? <p>Angle error is not defined where the ideal gate has no complex eigenvalue: such a gate turns by no angle that could be read.</p> : null}<p>Gate loss hardly sees a small wrong angle, which is why the two are shown apart.</p></>}>
+      <GateTable figures={figures} register={several} />
       <dl className="trio">
         {single.map((figure) => (
           <div key={`${figure.key}-${figure.depth}-${figure.qubits.join('-')}`}>

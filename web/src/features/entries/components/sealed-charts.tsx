@@ -9,12 +9,12 @@ import { fileTitle } from '../entry-words.ts';
 import { sealedDrawing } from '../sealed-data.ts';
 
 /** Sealed circuits: predicted against observed, and what is left over beside shot noise. */
-export function SealedCharts({ entry }: { entry: Entry }) {
-  const drawing = useMemo(() => sealedDrawing(entry.sealedPoints), [entry.sealedPoints]);
+export function SealedCharts({ entry, sealed }: { entry: Entry; sealed: Entry['sealedPoints'] }) {
+  const drawing = useMemo(() => sealedDrawing(sealed), [sealed]);
   const { points, share, residual, ellipse, shots, outside, table } = drawing;
   const observed = useMemo(() => upright(share), [share]);
-  const outcome = entry.sealedPoints[0]?.outcome ?? '';
-  const same = entry.sealedPoints.every((p) => p.outcome === outcome);
+  const outcome = sealed[0]?.outcome ?? '';
+  const same = sealed.every((p) => p.outcome === outcome);
   const of = same ? `outcome ${outcome}` : 'the outcome read';
   const stem = `evenbeam-${entry.accession}.${entry.version}-sealed`;
   const n = points.length;

@@ -1,8 +1,9 @@
+import { useMemo } from 'react';
 import type { Entry } from '#shared/contracts/entries.ts';
-import { countInWords, formatCount, formatNumber, formatRange, formatSigned, plural } from '#shared/domain/format.ts';
+import { countInWords, formatCount, formatNumber, formatRange, plural } from '#shared/domain/format.ts';
 import { EmptyState } from '#web/components/blank-state.tsx';
 import { Section } from '#web/components/section.tsx';
-import { qubitNames } from '../entry-words.ts';
+import { misfitNotes } from '../entry-words.ts';
 import { SealedCharts } from './sealed-charts.tsx';
 
 const digits = 4;
@@ -13,20 +14,20 @@ const verdict = (check: NonNullable<Entry['sealedCheck']>): string => {
 };
 
 function Misfit({ entry }: { entry: Entry }) {
-  return entry.patches.filter((p) => p.misfit !== null).map((patch) => (
-    <p key={patch.qubits.join('-')}>
-      <strong>Misfit</strong>{entry.patches.length > 1 ? ` of ${qubitNames(entry, patch.qubits)}` : ''} over the circuits of the estimate: {formatSigned(patch.misfit?.sigmas ?? 0, 1)} standard deviations from what the estimate leads one to expect.
-      {Math.abs(patch.misfit?.sigmas ?? 0) <= 2.58 ? ' No sign of drift.' : ' Outside the 99 % range: drift, leakage, crosstalk, or counts that are not counts.'}
-    </p>
-  ));
+  return misfitNotes(entry).map((sentence) => <p key={sentence}><strong>Misfit</strong>{sentence}</p>);
 }
+
+/** The circuits that the prediction is tested on: those over the whole register. A point's outcome has one digit a qubit. */
+const wholeRegister = (entry: Entry): Entry['sealedPoints'] => entry.sealedPoints.filter((p) => p.outcome.length === entry.register.length);
 
 /** The test on circuits that the estimate never saw. */
 export function SealedSection({ entry }: { entry: Entry }) {
   const { sealedCheck: check, circuits, provenance } = entry;
+  const whole = useMemo(() => wholeRegister(entry), [entry]);
   const notes = (
     <>
       <Misfit entry={entry} />
+      {entry.patches.length > 1 && whole.length > 0 && whole.length < circuits.sealed && check ? <p>The prediction is tested on the {formatCount(whole.length)} sealed circuits that run over the whole register. The others belong to single patches and are left out here.</p> : null}
       {provenance.runSheet ? <p>The choice was sealed by a hash printed on run sheet {provenance.runSheet} and revealed at freezing.</p> : null}
     </>
   );
@@ -35,9 +36,9 @@ export function SealedSection({ entry }: { entry: Entry }) {
       {check ? (
         <>
           <p className="opening mid">{verdict(check)}</p>
-          {entry.sealedPoints.length > 1 ? <SealedCharts entry={entry} /> : null}
+          {whole.length > 1 ? <SealedCharts entry={entry} sealed={whole} /> : null}
           <table className="tight cmp4">
-            <caption className="unseen">Prediction error on {countInWords(circuits.sealed)} sealed circuits</caption>
+            <caption className="unseen">Prediction error on {countInWords(whole.length)} sealed circuits</caption>
             <thead><tr><th scope="col">Mean total variation distance</th><th scope="col" className="n">Value</th><th scope="col">Reading</th></tr></thead>
             <tbody>
               <tr><th scope="row" className="row">This estimate</th><td className="n">{formatNumber(check.value, digits)}</td><td>{check.passed ? 'Passes: inside' : 'Does not pass: outside'} the 99 % range, {formatRange(check.low99, check.high99, digits)}</td></tr>
