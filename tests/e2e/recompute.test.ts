@@ -109,7 +109,7 @@ describe('recomputing an entry in Chromium', () => {
     if (!again) return;
     await page.unroute('**/v/1/seal');
     await page.getByRole('button', { name: 'Try again' }).click();
-    await section(page).getByText('Agrees', { exact: true }).first().waitFor({ timeout: 60_000 });
+    await section(page).getByText('Agrees', { exact: true }).first().waitFor({ timeout: 150_000 });
   });
 
   it('says that the connection broke', async () => {
