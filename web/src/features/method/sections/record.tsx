@@ -24,7 +24,7 @@ export function Versions() {
 export function Conformance() {
   return (
     <Part id="conformance" aside="For whoever writes the method anew in another language.">
-      <p className="prose">A set of inputs with their results is published at a fixed address: datasets small enough to follow by hand, a pair, a chained register, designs that are deficient, counts at the edge. Each result names the tolerance at which another implementation must agree. The list of all of them is <a href="/schema/conformance/index.json"><code>/schema/conformance/index.json</code></a>; the formats stand on the <Link to="/schema">schema page</Link>.</p>
+      <p className="prose">Inputs with the results they must give are published at a fixed address, among them complete and deficient designs of one qubit, pairs, a chained register, and the numbers of the sampler step by step. A vector once named never changes. The list of all of them is <a href="/schema/conformance/M1/index.json"><code>/schema/conformance/M1/index.json</code></a>, with a <a href="/schema/conformance/README.md">guide</a> to what must agree and how closely; the formats stand on the <Link to="/schema">schema page</Link>.</p>
       <p className="prose">On a checkout, <code>npm run --silent estimate -- FILE.json</code> gives the official estimate of any dataset, and every entry can be recomputed on its own page.</p>
     </Part>
   );
