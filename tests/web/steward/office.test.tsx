@@ -70,7 +70,7 @@ describe('mail and people', () => {
       }),
     });
     drawAt(<PeoplePage />);
-    expect((await screen.findByRole('row', { name: /Ida Marsh/ })).textContent).toContain('Larkspur Quantics (member)curatorNever');
+    expect((await screen.findByRole('row', { name: /Ida Marsh/ })).textContent).toContain('Larkspur Quantics (member)CuratorNever');
     expect(screen.getByRole('row', { name: /Provider/ }).textContent).toContain('14');
   });
 });

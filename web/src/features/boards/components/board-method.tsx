@@ -18,7 +18,7 @@ export function BoardMethod({ board }: { board: Board }) {
   const options = read ? methods : [...methods, { id: method, status: 'draft' as const, results: 0 }];
   if (options.length < 2) return null;
   return (
-    <section className="flow" aria-label="Figures of which version">
+    <section className="flow after" aria-label="Figures of which version">
       <div className="filters noprint">
         <Select label="Method version" value={method} options={options.map((v) => ({ value: v.id, label: labelOf(v) }))} onChange={(e) => setSearch(withField(search, 'method', e.target.value === official?.id ? '' : e.target.value))} />
       </div>

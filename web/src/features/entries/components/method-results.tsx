@@ -21,7 +21,7 @@ export function MethodResults({ accession, version }: { accession: string; versi
   const lines = methodLines(query.data?.items ?? []);
   if (lines.length < 2) return null;
   return (
-    <div className="after">
+    <div className="after flow">
       <h3>Other method versions</h3>
       <p className="prose">The same counts and seal, estimated again. The frozen figure is the registry’s; the others were added beside it and are never ranked. All share their counts, so overlapping intervals say nothing about the difference.</p>
       <DataTable caption="Retained signal at depth 16 by method version" captionHidden columns={columns} rows={lines} rowKey={(l) => l.method} tight />

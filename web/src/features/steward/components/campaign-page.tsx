@@ -22,7 +22,7 @@ export function CampaignPage({ id }: { id: string }) {
   const query = useQuery(campaignQuery(id));
   return (
     <Wrap>
-      <PageHead slim above={<Link to="/steward/campaigns">Methods and campaigns</Link>} title={`Campaign ${id}`} />
+      <PageHead slim above={<Link to="/steward/campaigns">Methods and campaigns</Link>} title={`Campaign ${id}`}>{query.data ? <CampaignFacts campaign={query.data} /> : null}</PageHead>
       <Read level={2} query={query} what="The campaign" loading="Loading the campaign"
         missing={<EmptyState level={2} title="There is no such campaign" act={<ButtonLink to="/steward/campaigns">All campaigns</ButtonLink>}>{`No campaign has the number ${id}.`}</EmptyState>}>
         {(campaign) => <Whole campaign={campaign} />}
@@ -31,18 +31,23 @@ export function CampaignPage({ id }: { id: string }) {
   );
 }
 
+function CampaignFacts({ campaign: { method, state, startedAt, startedBy, endedAt } }: { campaign: CampaignView }) {
+  return (
+    <Facts items={[
+      { term: 'Method version', value: method },
+      { term: 'State', value: campaignStateWords[state] },
+      { term: 'Started', value: <><When at={startedAt} exact />, {startedBy}</> },
+      ...(endedAt ? [{ term: 'Ended', value: <When at={endedAt} exact /> }] : []),
+    ]} />
+  );
+}
+
 function Whole({ campaign }: { campaign: CampaignView }) {
   const { counts, running, problems } = campaign;
   return (
     <>
-      <Facts items={[
-        { term: 'Method version', value: campaign.method },
-        { term: 'State', value: campaignStateWords[campaign.state] },
-        { term: 'Started', value: <><When at={campaign.startedAt} exact />, {campaign.startedBy}</> },
-        ...(campaign.endedAt ? [{ term: 'Ended', value: <When at={campaign.endedAt} exact /> }] : []),
-      ]} />
       <Section title="Progress">
-        <div className="say">
+        <div className="recordform">
           <Progress value={counts.total === 0 ? 1 : ended(counts) / counts.total} label={countWords(counts)} />
           <p>{countWords(counts)}.</p>
           <p role="status">{standingWords(campaign)}</p>

@@ -15,7 +15,7 @@ type Item = MailOverview['items'][number];
 
 const columns: readonly Column<Item>[] = [
   { id: 'subject', header: 'Message', rowHeader: true, cell: (m) => <>{m.subject}<span className="sub">{m.topic} {m.topicId}</span></> },
-  { id: 'to', header: 'To', cell: (m) => <span className="name">{m.recipient}</span> },
+  { id: 'to', header: 'To', cell: (m) => m.recipient },
   { id: 'queued', header: 'Owed since', nowrap: true, cell: (m) => <When at={m.queuedAt} exact /> },
   { id: 'sent', header: 'Sent', cell: (m) => (m.sentAt ? <When at={m.sentAt} exact /> : m.lastError ? `Not yet, after ${formatCount(m.attempts)} ${plural(m.attempts, 'attempt')}: ${m.lastError}` : 'Not yet') },
 ];

@@ -1,5 +1,6 @@
 import { useQuery } from '@tanstack/react-query';
 import type { PeopleOverview } from '#shared/contracts/office.ts';
+import { capitalise } from '#shared/domain/format.ts';
 import { DataTable, type Column } from '#web/components/data-table.tsx';
 import { PageHead } from '#web/components/page-head.tsx';
 import { Read } from '#web/components/read.tsx';
@@ -15,7 +16,7 @@ const kindWords: Readonly<Record<Organisation['kind'], string>> = { provider: 'P
 const people: readonly Column<Person>[] = [
   { id: 'name', header: 'Person', rowHeader: true, sortBy: (p) => p.name, cell: (p) => <>{p.name}<span className="sub">{p.email}</span></> },
   { id: 'organisations', header: 'Organisations', cell: (p) => p.memberships.map((m) => `${m.organisation} (${m.role})`).join(', ') || 'None' },
-  { id: 'roles', header: 'Office', cell: (p) => p.roles.join(', ') || 'None' },
+  { id: 'roles', header: 'Office', cell: (p) => capitalise(p.roles.join(', ')) || 'None' },
   { id: 'seen', header: 'Last sign-in', nowrap: true, sortBy: (p) => p.lastSignInAt, cell: (p) => (p.disabled ? 'Closed' : p.lastSignInAt ? <When at={p.lastSignInAt} exact /> : 'Never') },
 ];
 const organisations: readonly Column<Organisation>[] = [

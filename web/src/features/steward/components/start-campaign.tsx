@@ -24,7 +24,7 @@ export function StartCampaign({ methods }: { methods: readonly MethodView[] }) {
     },
   });
   return (
-    <div className="say">
+    <div className="recordform">
       <Select label="Method version" value={method} options={methods.map((m) => ({ value: m.id, label: `${m.id}, ${m.status}` }))} onChange={(e) => { setMethod(e.target.value); start.reset(); }} />
       <Read query={plan} what="What it would do" loading="Counting the entries" rows={1}>
         {(found) => (
