@@ -19,7 +19,7 @@ export function unsealed(plan: PatchPlan, circuits: readonly SheetCircuit[], sec
   return circuits.filter(({ id }) => !sealed.has(id));
 }
 
-/** Fewer probabilities than the rank asks for can never be sound; saves drawing what is bound to fail. */
+/** Fewer probabilities than the rank asks for can never be sound; saves judging what is bound to fail. */
 export function canBeSound(plan: PatchPlan): boolean {
   return plan.judged === null || plan.estimated * (2 ** plan.qubits.length - 1) >= (plan.expectedRank ?? 0);
 }
@@ -27,6 +27,7 @@ export function canBeSound(plan: PatchPlan): boolean {
 /** Is the patch sound by its unsealed circuits alone? */
 export function isSound(plan: PatchPlan, gates: readonly GateDeclaration[], circuits: readonly SheetCircuit[]): boolean {
   if (plan.judged === null) return true;
+  if (!canBeSound(plan)) return false;
   const input = { gates, qubits: plan.qubits, circuits, pairOfChain: plan.judged === 'pair-of-chain' };
   // The quick answer knows complete designs only; one qubit is judged in milliseconds, complete or not.
   if (plan.qubits.length === 1) return judgeDesign(input).sound(plan.expectedRank ?? undefined);

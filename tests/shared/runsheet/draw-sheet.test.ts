@@ -113,6 +113,25 @@ describe('sheets that fail', () => {
     expect(seen.every(({ fraction }) => fraction >= 0 && fraction < 1)).toBe(true);
   });
 
+  test('draws that are bound to fail are not judged, and yet count: the sheet is the one that judging every draw gives', () => {
+    const gateClass = shipped('clifford-t-1q/1');
+    const generator = sheetStream('0a');
+    const slow = (() => {
+      for (let raised = 0, draws = 0; ; raised++) {
+        const count = Math.ceil((20 * (10 + raised)) / 10);
+        for (let i = 0; i < (raised === 0 ? 200 : 20); i++) {
+          draws++;
+          const circuits = drawCircuits(generator, count, gateClass.lengths, gateClass.drawing).map((gates) => ({ gates }));
+          if (judgeDesign({ gates: gateClass.gates, qubits: [0], circuits }).sound(31)) return { count, draws, circuits };
+        }
+      }
+    })();
+    const drawn = draw('clifford-t-1q/1', 20, { seal: false });
+    expect([drawn.circuits, drawn.draws]).toEqual([slow.count, slow.draws]);
+    expect(drawn.sheet.patches[0]!.circuits.map(({ gates }) => ({ gates }))).toEqual(slow.circuits);
+    expect(drawn.circuits).toBeGreaterThanOrEqual(31);
+  });
+
   test('a class that asks for a rank its gates cannot have is given up with a sentence', () => {
     const impossible = { ...shipped('half-turn-1q/1'), expectedRank: 8 };
     expect(() => drawSheet({ gateClass: impossible, register: ['q0'], circuits: 20, shots: 1, seed: '00', issued: null, newSecret: null })).toThrow(expect.objectContaining({ code: 'design-unsound' }) as Error);
