@@ -4,10 +4,10 @@ import { join } from 'node:path';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
 import { quantileSorted } from '#shared/stats/quantile.ts';
 import { coverageStudySchema } from '#shared/studies/coverage-study.ts';
-import { cells, cellId, firstCells, furtherCells, type Cell } from '#tests/studies/coverage/cells.ts';
+import { cells, cellId, steps, type Cell } from '#tests/studies/coverage/cells.ts';
 import type { ChunkResult } from '#tests/studies/coverage/chunk.ts';
 import { placeAmong, studyIntervals } from '#tests/studies/coverage/read-interval.ts';
-import { nextTask } from '#tests/studies/coverage/schedule.ts';
+import { nextOfSteps, nextTask } from '#tests/studies/coverage/schedule.ts';
 import { summarise, writeStudy } from '#tests/studies/coverage/summarise.ts';
 import { Tally } from '#tests/studies/coverage/tally.ts';
 import { WorkFile } from '#tests/studies/coverage/work-file.ts';
@@ -53,9 +53,16 @@ describe('the schedule', () => {
     expect(nextTask([cell], (_, k) => k === 1)).toEqual({ cell, chunk: 0 });
   });
 
+  it('finishes a step before it goes on with the next', () => {
+    const late = { ...cell, noise: 0.01 };
+    expect(nextOfSteps([[cell], [late]], (c, k) => c === cellId(late) || k === 0)).toEqual({ cell, chunk: 1 });
+    expect(nextOfSteps([[cell], [late]], (c) => c === cellId(cell))).toEqual({ cell: late, chunk: 0 });
+    expect(nextOfSteps([[cell], [late]], () => true)).toBeNull();
+  });
+
   it('names every cell once, so that no seed is used twice', () => {
     expect(new Set(cells.map(cellId)).size).toBe(cells.length);
-    expect(cells).toHaveLength(firstCells.length + furtherCells.length);
+    expect(cells).toHaveLength(steps.flat().length);
   });
 });
 

@@ -52,32 +52,40 @@ const PAIR_CELLS: readonly Cell[] = [
 ];
 
 /**
- * The grid: cells that decide the domains of most entries come first and are finished before the others are gone on with. Every
- * class over its noise at the least number of shots, without and with nothing but coherent error; four times the shots with
- * coherent error, where a remaining bias would show.
+ * The grid. Every class over its noise at the least number of shots, without and with nothing but coherent error; four times the
+ * shots with coherent error, where a remaining bias would show. Each step is finished before the next is gone on with: those that
+ * decide the domains of most entries come first.
  */
-export const firstCells: readonly Cell[] = [
-  ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [1e-4], coherent: [1], shots: [500] }, ONE),
-  ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [1e-3, 3e-3, 6e-3], coherent: [0, 1], shots: [500] }, ONE),
-  ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [3e-3, 6e-3], coherent: [1], shots: [2000] }, ONE),
-  ...cellsOf({ gateClass: 'clifford-t-1q/1', noise: [1e-3], coherent: [1], shots: [500] }, ONE),
-  ...cellsOf({ gateClass: 'clifford-t-1q/1', noise: [3e-3], coherent: [0, 1], shots: [500] }, ONE),
-  ...PAIR_CELLS,
-];
-
-export const furtherCells: readonly Cell[] = [
-  ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [1e-2], coherent: [0, 1], shots: [500] }, ONE),
-  ...cellsOf({ gateClass: 'clifford-t-1q/1', noise: [1e-3, 3e-3], coherent: [1], shots: [2000] }, ONE),
-  ...cellsOf({ gateClass: 'clifford-t-1q/1', noise: [6e-3], coherent: [0, 1], shots: [500] }, ONE),
-  ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [1e-4, 1e-3, 1e-2], coherent: [1], shots: [2000] }, ONE),
-  ...cellsOf({ gateClass: 'half-turn-1q/1', noise: [1e-3], coherent: [0, 1], shots: [1000] }, ONE),
-  ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [1e-4], coherent: [0, 0.5], shots: [500] }, ONE),
-  ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [1e-3, 3e-3, 6e-3, 1e-2], coherent: [0.5], shots: [500] }, ONE),
-  ...cellsOf({ gateClass: 'clifford-t-1q/1', noise: [6e-3], coherent: [1], shots: [2000] }, ONE),
-  ...cellsOf({ gateClass: 'clifford-t-1q/1', noise: [1e-4, 1e-2], coherent: [0, 1], shots: [500] }, ONE),
+export const steps: readonly (readonly Cell[])[] = [
+  [
+    ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [1e-3, 3e-3, 6e-3], coherent: [1], shots: [500] }, ONE),
+    ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [3e-3], coherent: [0], shots: [500] }, ONE),
+    ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [3e-3], coherent: [1], shots: [2000] }, ONE),
+    ...cellsOf({ gateClass: 'clifford-t-1q/1', noise: [1e-3], coherent: [1], shots: [500] }, ONE),
+  ],
+  PAIR_CELLS,
+  [
+    ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [1e-4], coherent: [1], shots: [500] }, ONE),
+    ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [1e-3, 6e-3], coherent: [0], shots: [500] }, ONE),
+    ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [6e-3], coherent: [1], shots: [2000] }, ONE),
+    ...cellsOf({ gateClass: 'clifford-t-1q/1', noise: [3e-3], coherent: [0, 1], shots: [500] }, ONE),
+  ],
+  [
+    ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [1e-2], coherent: [0, 1], shots: [500] }, ONE),
+    ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [1e-4, 1e-3, 1e-2], coherent: [1], shots: [2000] }, ONE),
+    ...cellsOf({ gateClass: 'clifford-t-1q/1', noise: [6e-3], coherent: [0, 1], shots: [500] }, ONE),
+    ...cellsOf({ gateClass: 'clifford-t-1q/1', noise: [1e-3, 3e-3], coherent: [1], shots: [2000] }, ONE),
+    ...cellsOf({ gateClass: 'half-turn-1q/1', noise: [1e-3], coherent: [0, 1], shots: [1000] }, ONE),
+  ],
+  [
+    ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [1e-4], coherent: [0, 0.5], shots: [500] }, ONE),
+    ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [1e-3, 3e-3, 6e-3, 1e-2], coherent: [0.5], shots: [500] }, ONE),
+    ...cellsOf({ gateClass: 'clifford-t-1q/1', noise: [6e-3], coherent: [1], shots: [2000] }, ONE),
+    ...cellsOf({ gateClass: 'clifford-t-1q/1', noise: [1e-4, 1e-2], coherent: [0, 1], shots: [500] }, ONE),
+  ],
 ];
 
 const place = (cell: Cell): string => [gateClasses.findIndex((c) => c.id === cell.gateClass), cell.shots.toString().padStart(6, '0'), cell.noise.toFixed(6), cell.coherent].join(' ');
 
 /** All cells in the order of the tables: by class, shots, noise, coherent share. */
-export const cells: readonly Cell[] = [...firstCells, ...furtherCells].sort((a, b) => (place(a) < place(b) ? -1 : 1));
+export const cells: readonly Cell[] = steps.flat().sort((a, b) => (place(a) < place(b) ? -1 : 1));

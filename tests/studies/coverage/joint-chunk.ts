@@ -135,7 +135,7 @@ export function runJointChunk(cell: Cell, gateClass: GateClass, generator: Xoshi
     }
     const atEstimate = reader.read(maps);
     const estimates = counted.map(({ plan }) => plan.read(atEstimate));
-    const reference = sealedKnown ? new SealedReference(probabilitiesOf(set, sealedIndexed, maps), sealedCounts, generator) : null;
+    const reference = sealedKnown ? new SealedReference(atEstimate.probabilities.slice(sealedAt * set.d, (sealedAt + sheet.sealed.length) * set.d), sealedCounts, generator) : null;
     const values = counted.map(() => new Float64Array(cell.replicates).fill(NaN));
     for (let b = 0; b < cell.replicates; b++) {
       if (!replicates.finite[b]) continue;

@@ -7,9 +7,9 @@ import { fork, type ChildProcess } from 'node:child_process';
 import { writeFileSync } from 'node:fs';
 import { availableParallelism } from 'node:os';
 import { build } from 'esbuild';
-import { cellId, cells, firstCells, furtherCells } from '#tests/studies/coverage/cells.ts';
+import { cellId, cells, steps } from '#tests/studies/coverage/cells.ts';
 import type { ChunkResult } from '#tests/studies/coverage/chunk.ts';
-import { nextTask } from '#tests/studies/coverage/schedule.ts';
+import { nextOfSteps } from '#tests/studies/coverage/schedule.ts';
 import { summarise, writeStudy } from '#tests/studies/coverage/summarise.ts';
 import { WorkFile } from '#tests/studies/coverage/work-file.ts';
 
@@ -47,7 +47,7 @@ async function run(): Promise<void> {
   const timer = Number.isFinite(minutes) ? setTimeout(stop, minutes * 60_000) : null;
   const give = (child: ChildProcess): void => {
     const taken = (cell: string, chunk: number): boolean => work.has(cell, chunk) || under.has(`${cell} ${chunk}`);
-    const task = nextTask(firstCells, taken) ?? nextTask(furtherCells, taken);
+    const task = nextOfSteps(steps, taken);
     if (!task || stopped) return child.disconnect();
     under.add(`${cellId(task.cell)} ${task.chunk}`);
     child.send(task);

@@ -19,3 +19,12 @@ export function nextTask(cells: readonly Cell[], taken: (cell: string, chunk: nu
   }
   return best;
 }
+
+/** The next chunk of the first step that is not finished. */
+export function nextOfSteps(steps: readonly (readonly Cell[])[], taken: (cell: string, chunk: number) => boolean): Task | null {
+  for (const step of steps) {
+    const task = nextTask(step, taken);
+    if (task) return task;
+  }
+  return null;
+}
