@@ -1,6 +1,7 @@
 import { existsSync } from 'node:fs';
 import { basename, join } from 'node:path';
 import express, { Router, type RequestHandler, type Response } from 'express';
+import { isPageAddress } from '#shared/domain/page-addresses.ts';
 import { AppError } from '#shared/errors/app-error.ts';
 
 const year = 'public, max-age=31536000, immutable';
@@ -22,7 +23,7 @@ export const schemaFiles = (root: string): RequestHandler => express.static(root
 /** Addresses of the API, of sign-in, of built files and of published schemas; /schema itself is a page. */
 const notAPage = /^\/(api|auth|assets)(\/|$)|^\/schema\/.*\.(json|md|txt)$/;
 
-/** The built client: hashed assets for a year, the page itself always fresh, any page address answered by it. */
+/** The built client: hashed assets for a year, the page itself always fresh. Every address gets the page, one that no page has with 404. */
 export const clientFiles = (root: string): Router => {
   const router = Router();
   router.use('/assets', express.static(join(root, 'assets'), { index: false, redirect: false, fallthrough: true, cacheControl: false, setHeaders: (response) => response.set('cache-control', year) }));
@@ -31,7 +32,7 @@ export const clientFiles = (root: string): Router => {
     if (notAPage.test(request.path) || !request.accepts('html')) return next();
     const page = join(root, 'index.html');
     if (!existsSync(page)) return next(new AppError('unavailable', 'The pages are not built yet. `npm run build` makes them; the API answers meanwhile.'));
-    response.set('cache-control', 'no-cache').sendFile(page);
+    response.status(isPageAddress(request.path) ? 200 : 404).set('cache-control', 'no-cache').sendFile(page);
   });
   return router;
 };

@@ -14,11 +14,15 @@ const ask = (...args: Parameters<ReturnType<typeof asStranger>>) => asStranger(t
 
 describe('the built client', () => {
   it('answers every page address, help pages and /schema included, and is asked for anew each time', async () => {
-    for (const path of ['/', '/boards/quarter-turn-1q/1', '/problems/not-found', '/schema', '/schema/dataset']) {
+    for (const path of ['/', '/boards/quarter-turn-1q/1', '/problems/not-found', '/schema']) {
       const answer = await ask('get', path).set('accept', 'text/html').expect(200);
       expect(answer.text).toContain('the page');
       expect(answer.headers['cache-control']).toBe('no-cache');
     }
+  });
+
+  it('answers an address that no page has with the page too, which says so, and with status 404', async () => {
+    for (const path of ['/no-such-page', '/schema/dataset', '/boards/quarter-turn-1q', '/wp-login.php']) expect((await ask('get', path).set('accept', 'text/html').expect(404)).text, path).toContain('the page');
   });
 
   it('keeps hashed files for a year, and answers 404 for one that is gone', async () => {

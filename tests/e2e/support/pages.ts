@@ -32,7 +32,7 @@ const publicPages: readonly PageToVisit[] = [
   fixed('find', '/find?q=a'),
   fixed('find-nothing', '/find?q=nothing-of-that-name'),
   fixed('problem', '/problems/unusable-file'),
-  fixed('missing', '/no-such-page'),
+  fixed('missing', '/no-such-page', { refusals: true }),
   fixed('desk-signed-out', '/desk'),
   fixed('review-signed-out', '/review'),
 ];

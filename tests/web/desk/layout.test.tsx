@@ -51,6 +51,15 @@ describe('the desk', () => {
     expect(screen.getByRole('link', { name: 'Add a device.' }).getAttribute('href')).toBe('/desk/devices');
   });
 
+  it('on the page of an empty list what to do first is a heading of the second level, right under the title', async () => {
+    for (const [path, name] of [['/desk/run-sheets', 'No run sheet yet'], ['/desk/submissions', 'Nothing submitted yet']] as const) {
+      answerWith({ 'GET /api/v1/me': contributor, 'GET /api/v1/submissions': nothing, 'GET /api/v1/run-sheets': nothing });
+      open(path);
+      expect(await screen.findByRole('heading', { level: 2, name })).toBeTruthy();
+      document.body.innerHTML = '';
+    }
+  });
+
   it('asks for the lists of the organisation chosen, and remembers the choice', async () => {
     const user = userEvent.setup();
     const asked = answerWith({ ...base, 'GET /api/v1/me': twoOrganisations });

@@ -15,7 +15,7 @@ function RunSheets() {
       <PageHead slim title="Run sheets" tab={`Run sheets of ${organisation.name}`}>
         {sheets.data?.items.length === 0 ? null : <p className="acts headacts"><ButtonLink kind="first" to="/desk/run-sheets/new">Plan a run sheet</ButtonLink></p>}
       </PageHead>
-      <Read level={2} query={sheets} what="The list of run sheets" loading="Loading the run sheets" rows={5}>{({ items }) => <SheetList sheets={items} />}</Read>
+      <Read level={2} query={sheets} what="The list of run sheets" loading="Loading the run sheets" rows={5}>{({ items }) => <SheetList sheets={items} level={2} />}</Read>
     </Wrap>
   );
 }

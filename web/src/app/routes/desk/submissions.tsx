@@ -15,7 +15,7 @@ function Submissions() {
       <PageHead slim title="Submissions" tab={`Submissions of ${organisation.name}`}>
         {submissions.data?.items.length === 0 ? null : <p className="acts headacts"><ButtonLink kind="first" to="/desk/submissions/new">Submit a dataset</ButtonLink></p>}
       </PageHead>
-      <Read level={2} query={submissions} what="The list of submissions" loading="Loading the submissions" rows={5}>{({ items }) => <SubmissionList submissions={items} />}</Read>
+      <Read level={2} query={submissions} what="The list of submissions" loading="Loading the submissions" rows={5}>{({ items }) => <SubmissionList submissions={items} level={2} />}</Read>
     </Wrap>
   );
 }

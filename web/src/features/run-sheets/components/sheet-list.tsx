@@ -1,6 +1,6 @@
 import { Link } from 'react-router-dom';
 import type { RunSheetView } from '#shared/contracts/run-sheets.ts';
-import { EmptyState } from '#web/components/blank-state.tsx';
+import { EmptyState, type HeadingLevel } from '#web/components/blank-state.tsx';
 import { ButtonLink } from '#web/components/button.tsx';
 import { DataTable, type Column } from '#web/components/data-table.tsx';
 import { When } from '#web/components/when.tsx';
@@ -17,11 +17,11 @@ const columns: readonly Column<RunSheetView>[] = [
   { id: 'made', header: 'Asked for', nowrap: true, cell: (s) => <When at={s.createdAt} />, sortBy: (s) => s.createdAt },
 ];
 
-/** The run sheets of an organisation; without any, what to do first. */
-export function SheetList({ sheets }: { sheets: readonly RunSheetView[] }) {
+/** The run sheets of an organisation; without any, what to do first. `level` of the heading: 2 directly on a page. */
+export function SheetList({ sheets, level = 3 }: { sheets: readonly RunSheetView[]; level?: HeadingLevel }) {
   if (sheets.length === 0) {
     return (
-      <EmptyState title="No run sheet yet" act={<ButtonLink to="/desk/run-sheets/new">Plan a run sheet</ButtonLink>}>
+      <EmptyState level={level} title="No run sheet yet" act={<ButtonLink to="/desk/run-sheets/new">Plan a run sheet</ButtonLink>}>
         A run sheet lists the circuits to run on one device. It is the way to figures that are ranked.
       </EmptyState>
     );

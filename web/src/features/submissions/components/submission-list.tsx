@@ -2,7 +2,7 @@ import { Link } from 'react-router-dom';
 import type { SubmissionItem } from '#shared/contracts/submissions.ts';
 import { stateWords } from '#shared/domain/life-cycle.ts';
 import { formatLevel } from '#shared/domain/format.ts';
-import { EmptyState } from '#web/components/blank-state.tsx';
+import { EmptyState, type HeadingLevel } from '#web/components/blank-state.tsx';
 import { ButtonLink } from '#web/components/button.tsx';
 import { DataTable, type Column } from '#web/components/data-table.tsx';
 import { When } from '#web/components/when.tsx';
@@ -18,11 +18,11 @@ const columns: readonly Column<SubmissionItem>[] = [
   { id: 'changed', header: 'Last moved', nowrap: true, cell: (s) => <When at={s.changedAt} />, sortBy: (s) => s.changedAt },
 ];
 
-/** The submissions of an organisation; without any, what to do first. */
-export function SubmissionList({ submissions }: { submissions: readonly SubmissionItem[] }) {
+/** The submissions of an organisation; without any, what to do first. `level` of the heading: 2 directly on a page. */
+export function SubmissionList({ submissions, level = 3 }: { submissions: readonly SubmissionItem[]; level?: HeadingLevel }) {
   if (submissions.length === 0) {
     return (
-      <EmptyState title="Nothing submitted yet" act={<ButtonLink to="/desk/submissions/new">Submit a dataset</ButtonLink>}>
+      <EmptyState level={level} title="Nothing submitted yet" act={<ButtonLink to="/desk/submissions/new">Submit a dataset</ButtonLink>}>
         Run the circuits of a run sheet on the device and put the raw counts in one file. The file is checked in this browser before anything is sent.
       </EmptyState>
     );
