@@ -5,6 +5,7 @@ import { figure, timestamp } from './common.ts';
 /** One figure by another route, beside the official one. */
 export const opinionFigure = figure.pick({ key: true, depth: true, gate: true, qubits: true, value: true, reason: true }).extend({
   official: z.number().nullable(),
+  officialError: z.number().nullable(),
   /** (value − official) in standard errors of the official figure. */
   distance: z.number().nullable(),
 });

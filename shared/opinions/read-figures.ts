@@ -31,7 +31,7 @@ export function besideOfficial(plan: Pick<FigurePlan, 'key' | 'depth' | 'gate' |
   const found = official.find((f) => same(f, own));
   const theirs = found?.value ?? null;
   const error = found?.standardError ?? 0;
-  return { ...own, value, reason: value === null ? reason : null, official: theirs, distance: value !== null && theirs !== null && error > 0 ? (value - theirs) / error : null };
+  return { ...own, value, reason: value === null ? reason : null, official: theirs, officialError: error > 0 ? error : null, distance: value !== null && theirs !== null && error > 0 ? (value - theirs) / error : null };
 }
 
 /** Retained signal after sixteen gates and readout loss (joint datasets), error per gate, and the loss of each gate. */

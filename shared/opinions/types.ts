@@ -24,6 +24,8 @@ export interface OpinionFigure {
   value: number | null;
   reason: string | null;
   official: number | null;
+  /** Standard error of the official figure. */
+  officialError: number | null;
   /** (value − official)/standard error of the official figure; null where either is missing or the error is zero. */
   distance: number | null;
 }

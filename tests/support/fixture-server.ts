@@ -6,6 +6,7 @@ import { citationFixture } from './fixtures/citations.ts';
 import { deviceFixture, deviceListFixture } from './fixtures/devices.ts';
 import { entryFixture, entryListFixture } from './fixtures/entries.ts';
 import { versionResultsFixture } from './fixtures/method-results.ts';
+import { opinionsFixture } from './fixtures/opinions.ts';
 import { visitorFixture } from './fixtures/session.ts';
 
 const types: Readonly<Record<string, string>> = { '.html': 'text/html; charset=utf-8', '.js': 'text/javascript', '.css': 'text/css', '.svg': 'image/svg+xml', '.woff2': 'font/woff2', '.woff': 'font/woff', '.json': 'application/json' };
@@ -21,6 +22,7 @@ export const publicAnswers = (path: string, search: URLSearchParams): unknown =>
   if (path === '/api/v1/entries') return search.get('q') === 'nothing' ? { items: [], nextCursor: null } : entryListFixture;
   if (/^\/api\/v1\/entries\/EVB-000042\/v\/\d+\/results$/.test(path)) return versionResultsFixture;
   if (/^\/api\/v1\/entries\/EVB-000042\/v\/\d+\/citation$/.test(path)) return citationFixture;
+  if (/^\/api\/v1\/entries\/EVB-000042\/v\/\d+\/opinions$/.test(path)) return opinionsFixture;
   if (path.startsWith('/api/v1/entries/EVB-000042')) return path.endsWith('/v/1') ? { ...entryFixture, version: 1, state: 'superseded' } : entryFixture;
   if (path === '/api/v1/devices') return deviceListFixture;
   if (path === '/api/v1/devices/meadow-5') return deviceFixture;

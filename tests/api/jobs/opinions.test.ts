@@ -9,6 +9,7 @@ import { opinionMethods } from '#shared/opinions/types.ts';
 import type { Dataset } from '#shared/formats/types.ts';
 import { estimated } from '#tests/support/life.ts';
 import { makeDataset, makeDesk, makeDrawnSheet, workFor, type Desk } from '#tests/support/record.ts';
+import { testLogKey } from '#tests/support/log-key.ts';
 import { useTestApp } from '#tests/support/test-app.ts';
 
 const app = useTestApp({ faultsExpected: true });
@@ -33,7 +34,7 @@ const startProcess = (): ReturnType<typeof spawn> =>
   spawn(process.execPath, ['--import', 'tsx', '--disable-warning=DeprecationWarning', 'api/worker.ts'], {
     stdio: 'ignore',
     env: {
-      ...process.env, NODE_ENV: 'test', DATABASE_URL: app().database.url, SESSION_SECRET: 'a secret for tests only, long enough', GOOGLE_CLIENT_ID: 'x', GOOGLE_CLIENT_SECRET: 'x',
+      ...process.env, NODE_ENV: 'test', DATABASE_URL: app().database.url, SESSION_SECRET: 'a secret for tests only, long enough', LOG_SIGNING_KEY: testLogKey, GOOGLE_CLIENT_ID: 'x', GOOGLE_CLIENT_SECRET: 'x',
       GOOGLE_AUTHORIZATION_URL: 'http://127.0.0.1:9/authorize', GOOGLE_TOKEN_URL: 'http://127.0.0.1:9/token', GOOGLE_USERINFO_URL: 'http://127.0.0.1:9/userinfo', SMTP_URL: 'smtp://127.0.0.1:9', LOG_LEVEL: 'silent', WORKER_THREADS: '1',
     },
   });

@@ -4,11 +4,12 @@ import { useParams } from 'react-router-dom';
 import { describe, expect, it } from 'vitest';
 import { curator } from '#tests/support/fixtures/desk-people.ts';
 import { claimed, claimedByAnother, emptyQueue, queue, unclaimed } from '#tests/support/fixtures/desk-reviews.ts';
+import { computingOpinions, opinionsFixture } from '#tests/support/fixtures/opinions.ts';
 import { answerWith, drawAt, Refusal } from '#tests/web/desk/support.tsx';
 import { ReviewDesk } from '#web/features/reviews/components/review-desk.tsx';
 
 const at = '/api/v1/reviews/S-000218';
-const base = { 'GET /api/v1/me': curator, 'GET /api/v1/reviews': queue };
+const base = { 'GET /api/v1/me': curator, 'GET /api/v1/reviews': queue, 'GET /api/v1/submissions/S-000218/opinions': opinionsFixture, 'GET /api/v1/submissions/S-000209/opinions': computingOpinions };
 function Desk() {
   const { id } = useParams();
   return <ReviewDesk id={id ?? null} />;

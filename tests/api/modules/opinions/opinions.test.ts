@@ -1,3 +1,4 @@
+import request from 'supertest';
 import { beforeAll, describe, expect, it } from 'vitest';
 import { opinions } from '#shared/contracts/opinions.ts';
 import { SecondOpinion } from '#api/entities/second-opinion.ts';
@@ -38,26 +39,26 @@ describe('second opinions by address', () => {
   it('of an entry they are public, and so is how far they are; an unknown version is not found', async () => {
     const { id, accession, version } = await accepted(app(), desk, makeDataset(desk, await makeDrawnSheet(app(), desk)));
     const address = `/api/v1/entries/${accession}/v/${version}/opinions`;
-    expect((await app().request.get(address)).body).toMatchObject({ state: 'waiting' });
+    expect((await request(app().app).get(address)).body).toMatchObject({ state: 'waiting' });
     await make(id);
-    const answer = await app().request.get(address);
+    const answer = await request(app().app).get(address);
     expect(answer.status).toBe(200);
     expect(opinions.parse(answer.body).opinions.map((o) => o.reason === null)).toEqual([true, true, true, true, false]);
     // Which circuits were sealed is told by the seal alone.
     expect(JSON.stringify(answer.body)).not.toMatch(/c0\d\d\d/);
-    expect((await app().request.get(`/api/v1/entries/${accession}/v/99/opinions`)).status).toBe(404);
+    expect((await request(app().app).get(`/api/v1/entries/${accession}/v/99/opinions`)).status).toBe(404);
   });
 
   it('a structured sheet is asked for, run, estimated and frozen; its entry is never ranked and says why, and its structure is analysed', async () => {
     const sheet = await makeDrawnSheet(app(), desk, { kind: 'structured', circuits: 240 });
     expect((await desk.client('get', `/api/v1/run-sheets/${sheet.id}`)).body).toMatchObject({ kind: 'structured' });
     const { id, accession, version } = await accepted(app(), desk, makeDataset(desk, sheet));
-    const page = (await app().request.get(`/api/v1/entries/${accession}/v/${version}`)).body as { eligibility: { code: string; sentence: string }[] };
+    const page = (await request(app().app).get(`/api/v1/entries/${accession}/v/${version}`)).body as { eligibility: { code: string; sentence: string }[] };
     expect(page.eligibility.find((r) => r.code === 'structured')?.sentence).toBe('The run sheet is structured: its circuits repeat blocks. Boards compare entries whose circuits were drawn gate by gate.');
-    const board = (await app().request.get('/api/v1/boards/quarter-turn-1q/1')).body as { rows: { accession: string; eligible?: boolean }[] };
+    const board = (await request(app().app).get('/api/v1/boards/quarter-turn-1q/1')).body as { rows: { accession: string; eligible?: boolean }[] };
     expect(JSON.stringify(board.rows)).not.toContain(`"${accession}"`);
     await make(id);
-    const { opinions: found } = opinions.parse((await app().request.get(`/api/v1/entries/${accession}/v/${version}/opinions`)).body);
+    const { opinions: found } = opinions.parse((await request(app().app).get(`/api/v1/entries/${accession}/v/${version}/opinions`)).body);
     const structured = found.find((o) => o.method === 'structured')!;
     expect(structured.reason).toBeNull();
     expect(structured.figures.every((f) => f.value !== null && f.distance !== null)).toBe(true);

@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { runSheetCreate } from '#shared/contracts/run-sheets.ts';
+import { sheetKinds, type SheetKind } from '#shared/domain/sheet-kinds.ts';
 import type { GateClassSummary } from '#shared/contracts/gate-classes.ts';
 
 /** What the fields of the plan hold: text as typed, so that a wrong value can be named back. */
@@ -7,6 +8,7 @@ export interface PlanFields {
   device: string;
   gateClass: string;
   register: string[];
+  kind: SheetKind;
   circuits: string;
   shots: string;
   readoutError: string;
@@ -18,6 +20,7 @@ export interface Plan {
   device: string;
   gateClass: string;
   register: string[];
+  kind: SheetKind;
   circuits: number;
   shots: number;
   readoutError: number;
@@ -77,6 +80,8 @@ export const planSchema = (gateClass: GateClassSummary | undefined) =>
     device: z.string().min(1, 'Choose a device.'),
     gateClass: z.string().refine((id) => id === gateClass?.id, { error: 'Choose a gate class.' }),
     register,
+    // Only classes of one qubit offer the choice; a kind chosen for another class is left behind with it.
+    kind: z.enum(sheetKinds).transform((kind) => (gateClass?.registerSize === 1 ? kind : 'random')),
     circuits: wholeNumber('circuits', gateClass?.floor.circuits ?? 1, limits.circuits.maxValue ?? 20_000),
     shots: wholeNumber('shots', gateClass?.floor.shots ?? 1, limits.shots.maxValue ?? 10_000_000),
     readoutError,

@@ -10,6 +10,7 @@ import { Thread, ThreadForm } from '#web/components/thread.tsx';
 import { figureRows } from '#web/lib/figure-rows.ts';
 import { reviewQuery, writeReviewMessage } from '../api/reviews.ts';
 import { CaseChecks } from './case-checks.tsx';
+import { CaseOpinions } from './case-opinions.tsx';
 import { CaseHead } from './case-head.tsx';
 import { DesignFacts, sealedSentence } from './design-facts.tsx';
 import { EarlierEntries } from './earlier-entries.tsx';
@@ -41,6 +42,7 @@ export function Case({ review }: { review: Review }) {
             {s.result.warnings.length > 0 ? <Message kind="caution">{s.result.warnings.map((w) => <p key={w}>{w}</p>)}</Message> : null}
             <PreviewFigures caption="As they will be published" quiet={`by method ${s.result.method}, from ${formatCount(s.result.replicates)} replicates`} rows={figureRows(s.result.figures, s)} />
           </Block>
+          <Block title="Second opinions"><CaseOpinions submission={s} /></Block>
           <Block title="Design"><DesignFacts patches={s.result.patches} register={s.register} /></Block>
           <Block title="Earlier entries of the device"><EarlierEntries earlier={earlier} submission={s} /></Block>
         </>

@@ -1,5 +1,5 @@
 import { useEffect, type ReactNode } from 'react';
-import { useFormContext } from 'react-hook-form';
+import { useFormContext, useWatch } from 'react-hook-form';
 import type { DeviceSummary } from '#shared/contracts/devices.ts';
 import type { GateClassSummary } from '#shared/contracts/gate-classes.ts';
 import { formatCount } from '#shared/domain/format.ts';
@@ -34,6 +34,7 @@ export function PlanFields({ devices, classes, gateClass, onAddDevice, addDevice
       </div>
       <Select label="Gate class" options={classes.map((c) => ({ value: c.id, label: c.title }))} hint={gateClass ? <GateClassHint gateClass={gateClass} /> : undefined} error={errors.gateClass?.message} {...register('gateClass')} />
       {gateClass ? <RegisterFields size={gateClass.registerSize} /> : null}
+      {gateClass?.registerSize === 1 ? <Select label="Kind of sheet" options={kinds} hint={<KindHint />} {...register('kind')} /> : null}
       <div className="two-f">
         <TextField label="Circuits" inputMode="numeric" autoComplete="off" hint={gateClass ? `At least ${formatCount(gateClass.floor.circuits)}${gateClass.kind === 'chained' ? ', for each pair' : ''}` : undefined} error={errors.circuits?.message} {...register('circuits')} />
         <TextField label="Shots each" inputMode="numeric" autoComplete="off" hint={gateClass ? `At least ${formatCount(gateClass.floor.shots)}` : undefined} error={errors.shots?.message} {...register('shots')} />
@@ -48,6 +49,13 @@ export function PlanFields({ devices, classes, gateClass, onAddDevice, addDevice
       ) : null}
     </>
   );
+}
+
+const kinds = [{ value: 'random', label: 'Random circuits' }, { value: 'structured', label: 'Structured: sequences and repeated blocks' }];
+
+function KindHint() {
+  const kind = useWatch<Fields, 'kind'>({ name: 'kind' });
+  return kind === 'structured' ? <>Preparation sequence, repeated block, readout sequence. Estimated like any other, never ranked.</> : <>Drawn gate by gate, as boards ask for.</>;
 }
 
 function GateClassHint({ gateClass }: { gateClass: GateClassSummary }) {

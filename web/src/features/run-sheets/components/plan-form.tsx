@@ -26,7 +26,7 @@ interface PlanFormProps {
 }
 
 const startOf = (devices: readonly DeviceSummary[], first: GateClassSummary | undefined): Fields => ({
-  device: devices[0]?.id ?? '', gateClass: first?.id ?? '', register: Array.from({ length: first?.registerSize ?? 1 }, () => ''),
+  device: devices[0]?.id ?? '', gateClass: first?.id ?? '', register: Array.from({ length: first?.registerSize ?? 1 }, () => ''), kind: 'random',
   circuits: formatCount(Math.ceil((first?.floor.circuits ?? 200) * 1.5)), shots: formatCount(1000), readoutError: '0.010', wanted: '',
 });
 
@@ -40,7 +40,8 @@ export function PlanForm({ devices, classes, addDevice }: PlanFormProps) {
   });
   const fields = useWatch({ control: form.control }) as Fields;
   const gateClass = classes.find((c) => c.id === fields.gateClass);
-  const live = gateClass !== undefined && gateClass.registerSize <= largestForecast;
+  // Widths are worked out for circuits drawn gate by gate.
+  const live = gateClass !== undefined && gateClass.registerSize <= largestForecast && !(gateClass.registerSize === 1 && fields.kind === 'structured');
   const [adding, setAdding] = useState(devices.length === 0);
   useClassDefaults(form, gateClass);
 
@@ -100,7 +101,7 @@ function DrawForm({ form, side, children }: { form: PlanFormApi; side: ReactNode
   const act = useRef({ plan: '', key: '' });
   const draw = useMutation({
     mutationFn: (plan: Plan) => {
-      const asked = { device: plan.device, gateClass: plan.gateClass, register: plan.register, circuits: plan.circuits, shots: plan.shots };
+      const asked = { device: plan.device, gateClass: plan.gateClass, register: plan.register, kind: plan.kind, circuits: plan.circuits, shots: plan.shots };
       const text = JSON.stringify(asked);
       if (act.current.plan !== text) act.current = { plan: text, key: newIdempotencyKey() };
       return drawRunSheet({ plan: asked, key: act.current.key });

@@ -7,6 +7,7 @@ export function SheetFacts({ sheet }: { sheet: RunSheetView }) {
   const items: Fact[] = [
     { term: 'Device', value: <><span className="nowrap">{sheet.device.name}</span>, {sheet.register.length === 1 ? 'qubit' : 'qubits'} {sheet.register.join(', ')}</> },
     { term: 'Gate class', value: sheet.gateClass.title },
+    ...(sheet.kind === 'structured' ? [{ term: 'Kind', value: 'Structured, never ranked' }] : []),
     { term: 'Shots each', value: formatCount(sheet.shots) },
     { term: 'Asked for', value: <><When at={sheet.createdAt} /> by {sheet.createdBy}</> },
   ];
