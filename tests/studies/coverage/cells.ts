@@ -41,7 +41,7 @@ const cellsOf = ({ gateClass, noise, coherent, shots }: Grid, size: Pick<Cell, '
   noise.flatMap((n) => coherent.flatMap((c) => shots.map((s): Cell => ({ gateClass, noise: n, coherent: c, shots: s, ...size }))));
 
 const ONE = { trials: 2000, chunk: 50, replicates: 200 };
-const PAIR = { trials: 60, chunk: 10, replicates: 200 };
+const PAIR = { trials: 50, chunk: 10, replicates: 200 };
 
 const PAIR_CELLS: readonly Cell[] = [
   ...cellsOf({ gateClass: 'quarter-turn-cz-2q/1', noise: [3e-3, 2e-2], coherent: [0.5], shots: [1000] }, PAIR),
@@ -57,13 +57,13 @@ const PAIR_CELLS: readonly Cell[] = [
  * decide the domains of most entries come first.
  */
 export const steps: readonly (readonly Cell[])[] = [
+  PAIR_CELLS,
   [
     ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [1e-3, 3e-3, 6e-3], coherent: [1], shots: [500] }, ONE),
     ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [3e-3], coherent: [0], shots: [500] }, ONE),
     ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [3e-3], coherent: [1], shots: [2000] }, ONE),
     ...cellsOf({ gateClass: 'clifford-t-1q/1', noise: [1e-3], coherent: [1], shots: [500] }, ONE),
   ],
-  PAIR_CELLS,
   [
     ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [1e-4], coherent: [1], shots: [500] }, ONE),
     ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [1e-3, 6e-3], coherent: [0], shots: [500] }, ONE),
