@@ -35,7 +35,8 @@ function insideIn(cell: CoverageCell, key: FigureKey, depth: number | null): boo
 
 /**
  * The longest run of inside cells in the order of their true gate loss: from the quietest of them to the loudest, or from 0 where
- * the quietest studied is among them. A cell that fails in between ends a run, whatever its coherent share.
+ * the quietest studied is among them. A cell that fails in between ends a run, whatever its coherent share; one cell alone between
+ * two that fail is no range.
  */
 function longestRun(cells: readonly CoverageCell[], key: FigureKey, depth: number | null): Range | null {
   const order = [...cells].sort((a, b) => a.greatestLoss - b.greatestLoss);
@@ -44,7 +45,7 @@ function longestRun(cells: readonly CoverageCell[], key: FigureKey, depth: numbe
   for (let i = 0; i < order.length; i++) {
     let end = i;
     while (end < order.length && insideIn(order[end]!, key, depth)) end++;
-    if (end - i > most) {
+    if (end - i > most && (i === 0 || end - i > 1)) {
       most = end - i;
       best = { from: i === 0 ? 0 : order[i]!.greatestLoss, to: order[end - 1]!.greatestLoss };
     }
@@ -56,7 +57,7 @@ function longestRun(cells: readonly CoverageCell[], key: FigureKey, depth: numbe
 const common = (a: Range | null, b: Range | null): Range | null => {
   if (!a || !b) return null;
   const both = { from: Math.max(a.from, b.from), to: Math.min(a.to, b.to) };
-  return both.from <= both.to ? both : null;
+  return both.from < both.to ? both : null;
 };
 
 /**

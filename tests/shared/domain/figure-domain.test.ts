@@ -30,6 +30,10 @@ describe('the domain of a figure', () => {
     expect(domains(cell(1e-4, 2000), cell(1e-3, GOOD), cell(3e-3, GOOD))).toEqual([[1e-3, 3e-3, 500, null]]);
   });
 
+  it('is nowhere where one cell alone holds between two that fail', () => {
+    expect(domains(cell(1e-4, BAD), cell(1e-3, GOOD), cell(3e-3, BAD))).toEqual([]);
+  });
+
   it('is the common part between two studied numbers of shots, and that of the greatest beyond it', () => {
     const rich = (loss: number, inside: number) => cell(loss, inside, { shots: 2000 });
     expect(domains(cell(1e-3, GOOD), cell(6e-3, GOOD), rich(1e-3, GOOD), rich(6e-3, BAD))).toEqual([[0, 1e-3, 500, 2000], [0, 1e-3, 2000, null]]);
@@ -50,11 +54,12 @@ describe('the domain of a figure', () => {
     expect(domains(cell(1e-3, GOOD, { figures: figures(BAD) }))).toEqual([]);
   });
 
-  it('is nowhere new when a cell that held fails instead', () => {
-    fc.assert(fc.property(fc.array(fc.tuple(fc.integer({ min: 1, max: 100 }), fc.boolean()), { minLength: 1, maxLength: 8 }), fc.nat(7), (drawn, which) => {
-      const make = (turned: boolean) => drawn.map(([loss, good], i) => cell(loss * 1e-4, good && !(turned && i === which % drawn.length) ? GOOD : BAD));
-      const width = (cells: CoverageCell[]) => domainsOf({ cells }, 'quarter-turn-1q/1').length;
-      expect(width(make(true))).toBeLessThanOrEqual(width(make(false)));
+  it('never holds a cell that fails, and is bounded by cells', () => {
+    fc.assert(fc.property(fc.array(fc.tuple(fc.integer({ min: 1, max: 100 }), fc.boolean()), { minLength: 1, maxLength: 8 }), (drawn) => {
+      for (const { gateLoss: { from, to } } of domainsOf({ cells: drawn.map(([loss, good]) => cell(loss * 1e-4, good ? GOOD : BAD)) }, 'quarter-turn-1q/1')) {
+        expect(drawn.map(([loss]) => loss * 1e-4)).toContain(to);
+        for (const [loss, good] of drawn) if (loss * 1e-4 > from && loss * 1e-4 < to) expect(good).toBe(true);
+      }
     }), { seed: 3, numRuns: 200 });
   });
 
