@@ -79,7 +79,9 @@ describe('pages', () => {
     for (const name of ['Retained signal', 'Gates and readout', 'Sealed circuits', 'All figures', 'Provenance', 'Recompute', 'Versions', 'Caution']) expect(screen.getByRole('heading', { level: 2, name }), name).toBeTruthy();
     expect(screen.getByRole('link', { name: 'meadow-5-spring.json' }).getAttribute('href')).toBe('/api/v1/entries/EVB-000042/v/2/dataset');
     expect(screen.getByText(entryFixture.provenance.contentId)).toBeTruthy();
-    expect(screen.getByText('npm run --silent estimate -- meadow-5-spring.json --seal seal.json')).toBeTruthy();
+    expect(screen.getByText(/npm run --silent estimate -- \\ meadow-5-spring\.json --seal seal\.json/)).toBeTruthy();
+    expect(screen.getByText(/npm run --silent verify -- \\ http:\/\/localhost:?\d*\/entries\/EVB-000042\/v\/2/)).toBeTruthy();
+    expect(screen.getByRole('button', { name: 'Recompute here' })).toBeTruthy();
     expect(screen.getByText('Demonstration data: invented device and date.')).toBeTruthy();
     expect(screen.getByText('Not determined by this gate set.')).toBeTruthy();
   });
