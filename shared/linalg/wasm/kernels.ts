@@ -12,6 +12,8 @@ export interface Kernels {
   sparse4: (start: number, index: number, value: number, rows: number, x: number, y: number, xGroup: number, yGroup: number) => void;
   dots: (pairs: number, count: number, out: number, bytes: number) => void;
   uniform: (state: number, out: number, count: number) => void;
+  applyOne: (v: number, size: number, stride: number, map: number) => void;
+  applyTwo: (v: number, rest: number, count: number, si: number, sj: number, map: number, scratch: number) => void;
   columns: (a: number, n: number, height: number, x: number, out: number) => void;
 }
 

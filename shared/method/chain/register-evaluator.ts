@@ -1,5 +1,6 @@
 import type { Part, RegisterCircuit } from '#shared/method/chain/register-program.ts';
-import { applyToOne, applyToTwo, multiplyHeld } from '#shared/method/chain/register-state.ts';
+import { multiplyHeld } from '#shared/method/chain/register-state.ts';
+import { RegisterVectors } from '#shared/method/chain/register-vectors.ts';
 
 /**
  * Outcome probabilities of circuits over the register at one row of its patches' tables after another. Each part of a circuit
@@ -7,11 +8,16 @@ import { applyToOne, applyToTwo, multiplyHeld } from '#shared/method/chain/regis
  * Cost of a part of m qubits: about 64 multiply-adds a one-qubit gate and (16 + 4 + 4)·4^m an entangling gate.
  */
 export class RegisterEvaluator {
-  private vector = new Float64Array(0);
-  private spare = new Float64Array(0);
-  /** Gathered one-qubit maps, 16 elements a qubit, and which of them hold anything. */
-  private held = new Float64Array(0);
+  private vectors: RegisterVectors;
+  /** Which qubits have gathered maps. */
   private holds: boolean[] = [];
+  private readonly plain: boolean;
+
+  /** @param plain without kernels: for the test that both give the same bits */
+  constructor(plain = false) {
+    this.plain = plain;
+    this.vectors = new RegisterVectors(1, plain);
+  }
 
   /** Writes the d probabilities of the circuit to out[at …], unclipped. */
   run(circuit: RegisterCircuit, row: number, out: Float64Array, at: number): void {
@@ -33,27 +39,23 @@ export class RegisterEvaluator {
       else {
         this.release(m, first);
         this.release(m, second);
-        applyToTwo(this.vector, m, first, second, table.gates, g);
+        this.vectors.applyTwo(m, first, second, table.gates, g);
       }
     }
     for (let i = 0; i < m; i++) this.release(m, i);
     for (let i = 0; i < m; i++) this.readFirst(m, i, locals[i]!.effects, row * 8);
-    return this.vector;
+    return this.vectors.vector;
   }
 
   private prepare(m: number): void {
-    if (this.vector.length < 4 ** m) {
-      this.vector = new Float64Array(4 ** m);
-      this.spare = new Float64Array(4 ** m);
-      this.held = new Float64Array(16 * m);
-    }
-    this.vector[0] = 1;
+    if (this.vectors.qubits < m) this.vectors = new RegisterVectors(m, this.plain);
+    this.vectors.vector[0] = 1;
     this.holds = new Array<boolean>(m).fill(false);
   }
 
   /** vector ← vector ⊗ a state of one qubit. */
   private widen(state: Float64Array, at: number, size: number): void {
-    const { vector } = this;
+    const { vector } = this.vectors;
     for (let p = size - 1; p >= 0; p--) {
       const w = vector[p]!;
       for (let a = 3; a >= 0; a--) vector[4 * p + a] = w * state[at + a]!;
@@ -61,28 +63,27 @@ export class RegisterEvaluator {
   }
 
   private gather(maps: Float64Array, g: number, qubit: number): void {
-    if (this.holds[qubit]) multiplyHeld(maps, g, this.held, 16 * qubit);
-    else this.held.set(maps.subarray(g, g + 16), 16 * qubit);
+    if (this.holds[qubit]) multiplyHeld(maps, g, this.vectors.held, 16 * qubit);
+    else this.vectors.held.set(maps.subarray(g, g + 16), 16 * qubit);
     this.holds[qubit] = true;
   }
 
   private release(m: number, qubit: number): void {
     if (!this.holds[qubit]) return;
-    applyToOne(this.vector, m, qubit, this.held, 16 * qubit);
+    this.vectors.applyHeld(m, qubit);
     this.holds[qubit] = false;
   }
 
   /** Takes the effects of the qubit that comes first now; its outcome joins the others behind: [a, rest, seen] → [rest, seen, o]. */
   private readFirst(m: number, read: number, effects: Float64Array, at: number): void {
     const rest = 4 ** (m - 1 - read) * 2 ** read;
-    const { vector, spare } = this;
+    const { vector, spare } = this.vectors;
     for (let p = 0; p < rest; p++) {
       for (let o = 0; o < 2; o++) {
         const e = at + 4 * o;
         spare[2 * p + o] = effects[e]! * vector[p]! + effects[e + 1]! * vector[rest + p]! + effects[e + 2]! * vector[2 * rest + p]! + effects[e + 3]! * vector[3 * rest + p]!;
       }
     }
-    this.vector = spare;
-    this.spare = vector;
+    this.vectors.swap();
   }
 }

@@ -6,7 +6,8 @@
 /** Places at which the digits of two qubits are zero, in ascending order; kept for each pair of places. */
 const restCache = new Map<number, Int32Array>();
 
-function restOf(m: number, i: number, j: number): Int32Array {
+/** Those places, in ascending order. */
+export function restOf(m: number, i: number, j: number): Int32Array {
   const key = (m * 16 + Math.min(i, j)) * 16 + Math.max(i, j);
   let rest = restCache.get(key);
   if (!rest) {
