@@ -16,7 +16,7 @@ export interface Contender extends ReplicatesPlace {
 const cache = new BoundedCache<RankRange[]>(300);
 
 /** Entries² × replicates up to which the web process does it itself, some ten milliseconds; longer ones go to a thread. */
-const doneInPlace = 1_000_000;
+const doneInPlace = 500_000;
 
 const nameOf = (c: Contender): string => `${c.id}/${c.method}/${c.row}`;
 

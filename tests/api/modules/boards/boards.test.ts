@@ -69,6 +69,13 @@ describe('a board', () => {
     expect((await read()).rows.map((r) => [r.rank?.low, r.rank?.high])).toEqual([[1, 1], [2, 2], [3, 3]]);
   });
 
+  it('a thread finds the same ranges as the process itself: dropped replicates cross over as they are', async () => {
+    const entries = [0.97, 0.96, 0.9].map((estimate, i) => ({ estimate, replicates: Float64Array.from({ length: 300 }, (_, b) => (b === 7 * i ? NaN : estimate + 0.004 * (((b * (i + 3) * 37) % 300) / 150 - 1))) }));
+    const expected = rankRanges(entries, 'higher', 0.95);
+    expect(expected.map(({ low, high }) => [low, high])).not.toEqual([[1, 3], [1, 3], [1, 3]]);
+    expect(await app().deps.threads.run('rank-ranges', { entries, better: 'higher', level: 0.95 })).toEqual(expected);
+  });
+
   it('a filter hides rows but changes no rank; an older last circuit takes an entry out of the ranking', async () => {
     const whole = await read();
     const worst = await read(`?provider=${desks[2]?.organisation.slug}`);

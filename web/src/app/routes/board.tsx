@@ -1,5 +1,6 @@
 import { keepPreviousData, useQuery, type QueryClient } from '@tanstack/react-query';
 import { Link, useParams, useSearchParams, type LoaderFunctionArgs } from 'react-router-dom';
+import { boardReadings } from '#shared/domain/board-figures.ts';
 import { EmptyState } from '#web/components/blank-state.tsx';
 import { Caution } from '#web/components/caution.tsx';
 import { PageHead } from '#web/components/page-head.tsx';
@@ -25,6 +26,7 @@ export const loader = (queryClient: QueryClient) => ({ params, request }: Loader
 export function Component() {
   const gateClass = classOf(useParams());
   const [search] = useSearchParams();
+  const { figure } = viewOf(search);
   // The board read last stays while another figure or filter is fetched.
   const query = useQuery({ ...boardQuery(gateClass, viewOf(search)), placeholderData: (before, last) => (last?.queryKey[1] === gateClass ? keepPreviousData(before) : undefined) });
   return (
@@ -43,7 +45,7 @@ export function Component() {
         <Section title="How to read this">
           <div className="cols2">
             <div className="prose">
-              <p>A figure is printed with its interval, never alone. The dot is the estimate from the counts; the interval says how far it could move if the same run were repeated.</p>
+              <p>A figure is printed with its interval, never alone. The dot is the estimate from the counts; the interval says how far it could move if the same run were repeated. <Link to={`/method#${boardReadings[figure].key}`}>What this figure is</Link>.</p>
               <p>A rank range holds every place the entry may take, for all entries at once, at 95 % confidence. A place is printed as a single number only where the range is one place. Entries joined by a bracket cannot be told apart, and their order carries no meaning. <Link to="/method#ranks">How ranks are found</Link>.</p>
               <p>Only entries taken on equal terms are compared. What stands under “Not ranked” takes no part.</p>
             </div>

@@ -1,4 +1,5 @@
 import { useMemo } from 'react';
+import { Link } from 'react-router-dom';
 import type { Entry } from '#shared/contracts/entries.ts';
 import { figureDecimals, figureName, figureRange, figureValue } from '#shared/domain/figure-words.ts';
 import { formatCount, formatNumber } from '#shared/domain/format.ts';
@@ -23,7 +24,7 @@ export function AllFiguresSection({ entry }: { entry: Entry }) {
     { id: 'remarks', header: 'Remarks', cell: remarks },
   ], [entry]);
   return (
-    <Section title="All figures" aside={`Method ${entry.method}, ${formatCount(entry.replicates)} bootstrap replicates.`}>
+    <Section title="All figures" aside={<>{`Method ${entry.method}, ${formatCount(entry.replicates)} bootstrap replicates.`} <Link to="/method#figures">What each figure is</Link></>}>
       <details className="allfigures">
         <summary>{formatCount(entry.figures.length)} figures with every interval</summary>
         <DataTable caption={`Every figure of ${entry.accession}.${entry.version}`} captionHidden columns={columns} rows={entry.figures} rowKey={(f) => `${f.key}-${f.depth}-${f.gate}-${f.qubits.join('.')}`} tight stack={false} />

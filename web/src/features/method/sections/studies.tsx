@@ -15,7 +15,7 @@ function Study({ view: View, label, room }: { view: ComponentType; label: string
 export function Domain() {
   return (
     <Part id="domain" aside="Where the intervals were shown to hold, for each figure by itself.">
-      <p className="prose">An interval at 95 % is worth its name only where it holds the truth in about 95 of 100 cases. A cell of the coverage study, that is one gate class at one strength of noise, one coherent share and one number of shots, lies inside the domain of a figure if the 99 % Wilson interval of its measured coverage meets 93 to 97 %. The domain is kept for each figure, since a board needs only its own figure to lie inside. An entry is placed in it by its gate loss (the upper end of the 95 % interval, for its worst gate), its shots and the depth of the figure.</p>
+      <p className="prose">An interval at 95 % is worth its name only where it holds the truth in about 95 of 100 cases. A cell of the coverage study, that is one gate class at one strength of noise, one coherent share and one number of shots, lies inside the domain of a figure if the 99 % Wilson interval of its measured coverage meets 93 to 97 %, counted over the trials that settled, since only settled entries are ranked. The domain is kept for each figure, since a board needs only its own figure to lie inside. An entry is placed in it by its gate loss (the upper end of the 95 % interval, for its worst gate), its shots and the depth of the figure.</p>
       <p className="prose">An entry outside the domain of a figure is not ranked by it, and says so. It may stand on the board of another.</p>
       <Study view={DomainView} label="Loading the domain" room="studyroom" />
     </Part>
