@@ -52,7 +52,7 @@ describe('hostile titles and names', () => {
       parser.on('text', (text) => { texts[open] ??= text; });
       parser.on('closetag', () => { open = ''; });
       parser.write(dataciteXml(record)).close();
-      const kept = (text: string): string => oneLine(text.toWellFormed().replace(/[\u0000-\u0008\u000b\u000c\u000e-\u001f\ufffe\uffff]/g, '\ufffd'));
+      const kept = (text: string): string => oneLine(text.replace(/[\u0000-\u0008\u000b\u000c\u000e-\u001f\ufffe\uffff]|\p{Surrogate}/gu, '\ufffd'));
       expect(oneLine(texts.title ?? ''), record.title).toBe(kept(citedTitle(record)));
       expect(oneLine(texts.creatorName ?? ''), record.title).toBe(kept(record.title));
     }

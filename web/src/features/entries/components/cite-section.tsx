@@ -9,23 +9,33 @@ import { citationQuery } from '../api/citation.ts';
 
 type Style = Citation['styles'][number];
 
+/** The line with its accession in one piece: a hyphen is no place to break a name. */
+function Line({ text, name }: { text: string; name: string }) {
+  const at = text.indexOf(`(${name})`);
+  return at < 0 ? text : <>{text.slice(0, at)}<span className="nowrap">({name})</span>{text.slice(at + name.length + 2)}</>;
+}
+
 /** One style: its line, and a button that copies it. Where the browser does not let a page copy, the line is selected. */
-function StyleLine({ style, onTold }: { style: Style; onTold: (words: string) => void }) {
+function StyleLine({ style, name }: { style: Style; name: string }) {
+  const [told, setTold] = useState('');
   const line = useRef<HTMLParagraphElement>(null);
   const byHand = (): void => {
     if (line.current) window.getSelection()?.selectAllChildren(line.current);
-    onTold('This browser does not let the page copy. The text is selected; copy it by keyboard.');
+    setTold('This browser does not let the page copy. The text is selected; copy it by keyboard.');
   };
   const copy = (): void => {
     // Absent on pages that were not sent over a safe connection.
     if (!('clipboard' in navigator)) return byHand();
-    navigator.clipboard.writeText(style.text).then(() => onTold(`Copied in ${style.label} style.`), byHand);
+    navigator.clipboard.writeText(style.text).then(() => setTold(`Copied in ${style.label} style.`), byHand);
   };
   return (
     <li>
       <h3 className="tbl">{style.label}</h3>
-      <p ref={line} className="citation prose">{style.text}</p>
-      <Button kind="plain" onClick={copy}>Copy <span className="unseen">in {style.label} style</span></Button>
+      <p ref={line} className="citation prose"><Line text={style.text} name={name} /></p>
+      <div className="copyrow noprint">
+        <Button kind="plain" onClick={copy}>Copy <span className="unseen">in {style.label} style</span></Button>
+        <p role="status" className="small quiet">{told}</p>
+      </div>
     </li>
   );
 }
@@ -37,11 +47,9 @@ function Doi({ doi }: { doi: Citation['doi'] }) {
 }
 
 function Lines({ citation }: { citation: Citation }) {
-  const [told, setTold] = useState('');
   return (
     <div className="flow">
-      <ul className="citations">{citation.styles.map((style) => <StyleLine key={style.style} style={style} onTold={setTold} />)}</ul>
-      <p role="status" className="small quiet noprint copied">{told}</p>
+      <ul className="citations">{citation.styles.map((style) => <StyleLine key={style.style} style={style} name={citation.name} />)}</ul>
       <Doi doi={citation.doi} />
       <p className="takeaway noprint">{citation.formats.map(({ format, label, href }) => <a key={format} href={href} download>{label}</a>)}</p>
     </div>
