@@ -82,7 +82,7 @@ describe('planning a run sheet', () => {
     await user.click(screen.getByRole('button', { name: 'Draw this run sheet' }));
     await waitFor(() => expect(router.state.location.pathname).toBe('/desk/run-sheets/RS-000131'));
     const posts = asked.filter((call) => call.method === 'POST');
-    expect(posts[0]?.body).toEqual({ device: hedge.id, gateClass: 'quarter-turn-1q/1', register: ['q3'], circuits: 300, shots: 1000 });
+    expect(posts[0]?.body).toEqual({ device: hedge.id, gateClass: 'quarter-turn-1q/1', register: ['q3'], kind: 'random', circuits: 300, shots: 1000 });
     expect(posts[1]?.headers.get('idempotency-key')).toBe(posts[0]?.headers.get('idempotency-key'));
   });
 

@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { planSchema, resizedRegister, type PlanFields } from '#web/features/run-sheets/plan-schema.ts';
 import { gateClassAnswer } from '#tests/support/fixtures/desk-people.ts';
 
-const good: PlanFields = { device: 'd', gateClass: 'quarter-turn-1q/1', register: ['q3'], circuits: '230', shots: '1 000', readoutError: '0.010', wanted: '0.0030' };
+const good: PlanFields = { device: 'd', gateClass: 'quarter-turn-1q/1', register: ['q3'], kind: 'random', circuits: '230', shots: '1 000', readoutError: '0.010', wanted: '0.0030' };
 const classOf = (id: string) => gateClassAnswer.items.find((c) => c.id === id);
 const schema = planSchema(classOf(good.gateClass));
 const faults = (change: Partial<PlanFields>): Record<string, string> => {
@@ -20,6 +20,12 @@ describe('the rules of a plan', () => {
     expect(faults({ circuits: '120' })).toEqual({ circuits: '120 is below the floor of 200 for this gate class.' });
     expect(faults({ shots: '499' })).toEqual({ shots: '499 is below the floor of 500 for this gate class.' });
     expect(faults({ circuits: '200', shots: '500' })).toEqual({});
+  });
+
+  it('offers structured circuits for one qubit; chosen before a change to a pair, the kind is left behind', () => {
+    expect(schema.parse({ ...good, kind: 'structured' }).kind).toBe('structured');
+    const pair = { ...good, gateClass: 'quarter-turn-cz-2q/1', register: ['q1', 'q2'], circuits: '1200', kind: 'structured' as const };
+    expect(planSchema(classOf(pair.gateClass)).parse(pair).kind).toBe('random');
   });
 
   it('tells all faults at once', () => {
