@@ -50,13 +50,17 @@ interface Answer {
 
 const quiet = new Set([200, 404, 410]);
 
-async function get(address: string, most: number): Promise<Answer> {
+/** A kept connection that the other side has closed meanwhile: reading once more is all it takes. */
+const closedMeanwhile = new Set(['ECONNRESET', 'UND_ERR_SOCKET']);
+
+async function get(address: string, most: number, again = true): Promise<Answer> {
   try {
     const response = await fetch(address, { headers: { accept: 'application/json, application/octet-stream' }, signal: AbortSignal.timeout(timeoutMs) });
     if (!quiet.has(response.status)) throw new Unreadable(`${address} answered with status ${response.status}.`);
     return { status: response.status, bytes: await readBounded(response, most, address) };
   } catch (error) {
     if (error instanceof Unreadable) throw error;
+    if (again && closedMeanwhile.has(reasonOf(error))) return get(address, most, false);
     throw new Unreadable(`${address} cannot be reached (${reasonOf(error)}).`);
   }
 }
