@@ -4,7 +4,7 @@ import { join } from 'node:path';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
 import { quantileSorted } from '#shared/stats/quantile.ts';
 import { coverageStudySchema } from '#shared/studies/coverage-study.ts';
-import { cells, cellId, steps, type Cell } from '#tests/studies/coverage/cells.ts';
+import { cells, cellId, type Cell } from '#tests/studies/coverage/cells.ts';
 import type { ChunkResult } from '#tests/studies/coverage/chunk.ts';
 import { placeAmong, studyIntervals } from '#tests/studies/coverage/read-interval.ts';
 import { nextOfSteps, nextTask } from '#tests/studies/coverage/schedule.ts';
@@ -62,7 +62,7 @@ describe('the schedule', () => {
 
   it('names every cell once, so that no seed is used twice', () => {
     expect(new Set(cells.map(cellId)).size).toBe(cells.length);
-    expect(cells).toHaveLength(steps.flat().length);
+    expect(cells.every((c) => c.trials >= 100)).toBe(true);
   });
 });
 

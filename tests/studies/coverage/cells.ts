@@ -41,7 +41,7 @@ const cellsOf = ({ gateClass, noise, coherent, shots }: Grid, size: Pick<Cell, '
   noise.flatMap((n) => coherent.flatMap((c) => shots.map((s): Cell => ({ gateClass, noise: n, coherent: c, shots: s, ...size }))));
 
 const ONE = { trials: 2000, chunk: 50, replicates: 200 };
-const PAIR = { trials: 50, chunk: 10, replicates: 200 };
+const PAIR = { trials: 100, chunk: 10, replicates: 200 };
 
 const PAIR_CELLS: readonly Cell[] = [
   ...cellsOf({ gateClass: 'quarter-turn-cz-2q/1', noise: [3e-3, 2e-2], coherent: [0.5], shots: [1000] }, PAIR),
@@ -54,16 +54,17 @@ const PAIR_CELLS: readonly Cell[] = [
 /**
  * The grid. Every class over its noise at the least number of shots, without and with nothing but coherent error; four times the
  * shots with coherent error, where a remaining bias would show. Each step is finished before the next is gone on with: those that
- * decide the domains of most entries come first.
+ * decide the domains of most entries come first, and of pairs as many as say anything.
  */
 export const steps: readonly (readonly Cell[])[] = [
-  PAIR_CELLS,
+  PAIR_CELLS.map((cell) => ({ ...cell, trials: 30 })),
   [
     ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [1e-3, 3e-3, 6e-3], coherent: [1], shots: [500] }, ONE),
     ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [3e-3], coherent: [0], shots: [500] }, ONE),
     ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [3e-3], coherent: [1], shots: [2000] }, ONE),
     ...cellsOf({ gateClass: 'clifford-t-1q/1', noise: [1e-3], coherent: [1], shots: [500] }, ONE),
   ],
+  PAIR_CELLS,
   [
     ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [1e-4], coherent: [1], shots: [500] }, ONE),
     ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [1e-3, 6e-3], coherent: [0], shots: [500] }, ONE),
@@ -87,5 +88,5 @@ export const steps: readonly (readonly Cell[])[] = [
 
 const place = (cell: Cell): string => [gateClasses.findIndex((c) => c.id === cell.gateClass), cell.shots.toString().padStart(6, '0'), cell.noise.toFixed(6), cell.coherent].join(' ');
 
-/** All cells in the order of the tables: by class, shots, noise, coherent share. */
-export const cells: readonly Cell[] = steps.flat().sort((a, b) => (place(a) < place(b) ? -1 : 1));
+/** All cells, each with all its trials, in the order of the tables: by class, shots, noise, coherent share. */
+export const cells: readonly Cell[] = [...new Map(steps.flat().map((cell) => [cellId(cell), cell])).values()].sort((a, b) => (place(a) < place(b) ? -1 : 1));
