@@ -1,6 +1,7 @@
 import { closedDoors } from './suites/closed-doors.ts';
 import { everyPage } from './suites/every-page.ts';
 import { keyboard } from './suites/keyboard.ts';
+import { landingPages } from './suites/landing-pages.ts';
 import { wholeStory } from './suites/whole-story.ts';
 import { useRunningRegistry } from './support/registry.ts';
 import { useVisitors } from './support/visitors.ts';
@@ -13,3 +14,4 @@ wholeStory(open);
 closedDoors(open);
 keyboard(open);
 everyPage(open, browser, registry);
+landingPages(registry);
