@@ -5,6 +5,7 @@ import { gateClassAnswer } from '#tests/support/fixtures/desk-people.ts';
 import { cheapestPlan, circuitsToForecast, headlineWidth, plannerCurves } from '#web/features/run-sheets/plan-forecast.ts';
 import { forecastRows, gateListWords, timeWords, widthWords } from '#web/features/run-sheets/plan-words.ts';
 import { sheetSize, totalShots } from '#web/features/run-sheets/sheet-size.ts';
+import { circuitsOf } from '#web/features/run-sheets/sheet-words.ts';
 import { unitForecast, type UnitForecast } from '#web/features/run-sheets/unit-forecast.ts';
 
 const classOf = (id: string) => {
@@ -31,6 +32,15 @@ describe('the size of a sheet', () => {
       const sum = (of: 'estimated' | 'sealed') => plans.reduce((s, p) => s + p[of], 0);
       expect(sheetSize(gateClassById(id)!, 777), id).toEqual({ open: sum('estimated'), sealed: sum('sealed') });
     }
+  });
+});
+
+describe('the circuits of a drawn sheet', () => {
+  it('are read from the shots, since a chained sheet counts those of each pair only', () => {
+    // three qubits, 600 a pair: 2·600 + 3·200 to estimate from, 2·150 + 3·50 + 40 sealed
+    expect(circuitsOf({ circuits: 600, sealed: 490, shots: 1000, totalShots: 2_290_000 })).toEqual({ all: 2290, open: 1800 });
+    expect(circuitsOf({ circuits: 230, sealed: 58, shots: 500, totalShots: 144_000 })).toEqual({ all: 288, open: 230 });
+    expect(circuitsOf({ circuits: null, sealed: null, shots: 500, totalShots: null })).toBeNull();
   });
 });
 

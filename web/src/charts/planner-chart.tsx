@@ -18,6 +18,8 @@ interface PlannerChartProps {
 
 const width = (halfWidth: number): string => `±${formatNumber(halfWidth, decimalsFor(halfWidth))}`;
 const none: readonly PlannerPoint[] = [];
+/** Per cent of the height: a label above a point that lies higher would run into the title of the axis. */
+const roomAbove = 20;
 
 /** What certainty costs: the half-width of an interval against the shots of the whole sheet. */
 export function PlannerChart({ curves, plan, wanted, cheapest, fileName }: PlannerChartProps) {
@@ -35,7 +37,7 @@ export function PlannerChart({ curves, plan, wanted, cheapest, fileName }: Plann
           <g aria-hidden="true">
             {wanted === null ? null : <><line className="wanted" x1="0" x2="100%" y1={`${y.at(wanted)}%`} y2={`${y.at(wanted)}%`} /><text className="lab" x="0" dx="6" y={`${y.at(wanted)}%`} dy="-7">wanted: {width(wanted)}</text></>}
             {lines.map((line) => <text key={line.name} className={line.main ? 't' : undefined} x={`${line.end.x}%`} dx="8" y={`${line.end.y}%`} dy="4">{line.name}</text>)}
-            {plan ? <Leader x={x.at(plan.shots)} y={y.at(plan.halfWidth)} up words={`your plan, ${width(plan.halfWidth)}`} own /> : null}
+            {plan ? <Leader x={x.at(plan.shots)} y={y.at(plan.halfWidth)} up={y.at(plan.halfWidth) > roomAbove} words={`your plan, ${width(plan.halfWidth)}`} own /> : null}
             {cheapest ? <Leader x={x.at(cheapest.shots)} y={y.at(cheapest.halfWidth)} up={false} words={`cheapest, ${shortCount(cheapest.shots)} shots`} /> : null}
           </g>
           {points.length > 0 ? <Points label="Plans" points={points} /> : null}

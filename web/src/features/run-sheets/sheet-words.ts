@@ -12,3 +12,13 @@ export const sheetState = ({ state, progress, submission }: Pick<RunSheetView, '
     case 'drawn': return submission ? 'Used' : 'Drawn';
   }
 };
+
+/**
+ * Circuits of the whole sheet, and those to estimate from. Of a chained register `circuits` counts those of each pair only,
+ * so the whole is read from the shots, which are the same for every circuit.
+ */
+export const circuitsOf = ({ circuits, sealed, shots, totalShots }: Pick<RunSheetView, 'circuits' | 'sealed' | 'shots' | 'totalShots'>): { all: number; open: number } | null => {
+  if (circuits === null || sealed === null) return null;
+  const all = totalShots === null ? circuits + sealed : totalShots / shots;
+  return { all, open: all - sealed };
+};

@@ -1,10 +1,11 @@
 import type { RunSheetView } from '#shared/contracts/run-sheets.ts';
 import { Steps } from '#web/components/steps.tsx';
 import { formatCount } from '#shared/domain/format.ts';
+import { circuitsOf } from '../sheet-words.ts';
 
 /** How to run a sheet and what to send back. */
 export function HowToRun({ sheet }: { sheet: RunSheetView }) {
-  const all = (sheet.circuits ?? 0) + (sheet.sealed ?? 0);
+  const all = circuitsOf(sheet)?.all ?? 0;
   return (
     <Steps wide items={[
       <p key="run">Run all {formatCount(all)} circuits on {sheet.register.join(', ')} of {sheet.device.name}, {formatCount(sheet.shots)} shots each, neither more nor fewer. Gates stand in order of time; an empty list means: prepare and measure at once.</p>,

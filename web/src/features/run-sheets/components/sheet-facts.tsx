@@ -2,6 +2,7 @@ import type { RunSheetView } from '#shared/contracts/run-sheets.ts';
 import { Facts, Ledger, type Fact } from '#web/components/facts.tsx';
 import { When } from '#web/components/when.tsx';
 import { formatCount } from '#shared/domain/format.ts';
+import { circuitsOf } from '../sheet-words.ts';
 
 export function SheetFacts({ sheet }: { sheet: RunSheetView }) {
   const items: Fact[] = [
@@ -17,8 +18,9 @@ export function SheetFacts({ sheet }: { sheet: RunSheetView }) {
 /** What the draw gave: numbers of circuits and the soundness of the design. */
 export function DrawnLedger({ sheet }: { sheet: RunSheetView }) {
   const raised = sheet.circuits !== null && sheet.circuits > sheet.circuitsAsked;
+  const number = circuitsOf(sheet);
   const items: Fact[] = [
-    { term: 'Circuits', value: sheet.circuits === null || sheet.sealed === null ? '' : `${formatCount(sheet.circuits + sheet.sealed)}: ${formatCount(sheet.circuits)} to estimate from, ${formatCount(sheet.sealed)} sealed` },
+    { term: 'Circuits', value: number ? `${formatCount(number.all)}: ${formatCount(number.open)} to estimate from${sheet.circuits !== number.open ? `, ${formatCount(sheet.circuits ?? 0)} of them for each pair` : ''}; ${formatCount(sheet.sealed ?? 0)} sealed` : '' },
     { term: 'Shots in all', value: sheet.totalShots === null ? '' : formatCount(sheet.totalShots) },
     { term: 'Rank', value: sheet.rank },
     { term: 'Condition ratio', value: sheet.conditionRatio === null ? '' : <>σ<sub>r</sub>/σ<sub>1</sub> {sheet.conditionRatio.toPrecision(2)}, floor 0.01</> },

@@ -5,13 +5,13 @@ import { ButtonLink } from '#web/components/button.tsx';
 import { DataTable, type Column } from '#web/components/data-table.tsx';
 import { When } from '#web/components/when.tsx';
 import { formatCount } from '#shared/domain/format.ts';
-import { sheetState } from '../sheet-words.ts';
+import { circuitsOf, sheetState } from '../sheet-words.ts';
 
 const columns: readonly Column<RunSheetView>[] = [
   { id: 'sheet', header: 'Run sheet', rowHeader: true, nowrap: true, cell: (s) => <Link to={`/desk/run-sheets/${s.id}`}>{s.id}</Link>, sortBy: (s) => s.id },
   { id: 'device', header: 'Device', cell: (s) => <><span className="nowrap">{s.device.name}</span>, {s.register.join(', ')}</>, sortBy: (s) => s.device.name },
   { id: 'class', header: 'Gate class', cell: (s) => s.gateClass.title, sortBy: (s) => s.gateClass.title },
-  { id: 'circuits', header: 'Circuits', numeric: true, cell: (s) => formatCount(s.circuits === null ? s.circuitsAsked : s.circuits + (s.sealed ?? 0)), sortBy: (s) => s.circuits ?? s.circuitsAsked },
+  { id: 'circuits', header: 'Circuits', numeric: true, cell: (s) => formatCount(circuitsOf(s)?.all ?? s.circuitsAsked), sortBy: (s) => circuitsOf(s)?.all ?? s.circuitsAsked },
   { id: 'shots', header: 'Shots each', numeric: true, cell: (s) => formatCount(s.shots), sortBy: (s) => s.shots },
   { id: 'state', header: 'State', cell: (s) => (s.submission ? <>{sheetState(s)}, <Link className="nowrap" to={`/desk/submissions/${s.submission}`}>{s.submission}</Link></> : sheetState(s)), sortBy: sheetState },
   { id: 'made', header: 'Asked for', nowrap: true, cell: (s) => <When at={s.createdAt} />, sortBy: (s) => s.createdAt },
