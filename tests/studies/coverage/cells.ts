@@ -64,13 +64,13 @@ export const steps: readonly (readonly Cell[])[] = [
     ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [3e-3], coherent: [1], shots: [2000] }, ONE),
     ...cellsOf({ gateClass: 'clifford-t-1q/1', noise: [1e-3], coherent: [1], shots: [500] }, ONE),
   ],
-  PAIR_CELLS,
   [
     ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [1e-4], coherent: [1], shots: [500] }, ONE),
     ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [1e-3, 6e-3], coherent: [0], shots: [500] }, ONE),
     ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [6e-3], coherent: [1], shots: [2000] }, ONE),
     ...cellsOf({ gateClass: 'clifford-t-1q/1', noise: [3e-3], coherent: [0, 1], shots: [500] }, ONE),
   ],
+  PAIR_CELLS,
   [
     ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [1e-2], coherent: [0, 1], shots: [500] }, ONE),
     ...cellsOf({ gateClass: 'quarter-turn-1q/1', noise: [1e-4, 1e-3, 1e-2], coherent: [1], shots: [2000] }, ONE),

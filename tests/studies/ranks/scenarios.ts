@@ -17,8 +17,8 @@ const UNEQUAL = [300, 500, 500, 1000, 1000, 2000, 2000, 5000, 10_000, 20_000];
 export const scenarios: readonly Scenario[] = [
   { id: 'equal', title: 'Ten equal devices', offsets: ten(() => 0), shots: ten(() => 1000) },
   { id: 'equal-unequal-shots', title: 'Ten equal devices, 300 to 20,000 shots', offsets: ten(() => 0), shots: UNEQUAL },
-  { id: 'even', title: 'Evenly spaced, one standard error apart', offsets: ten((i) => -i), shots: ten(() => 1000) },
+  { id: 'even', title: 'Evenly spaced, one standard error apart', offsets: ten((i) => 0 - i), shots: ten(() => 1000) },
   { id: 'clusters', title: 'Three clusters of equal devices, six standard errors apart', offsets: ten((i) => (i < 3 ? 0 : i < 7 ? -6 : -12)), shots: ten(() => 1000) },
   { id: 'outlier', title: 'Nine equal devices and one ten standard errors better', offsets: ten((i) => (i === 0 ? 10 : 0)), shots: ten(() => 1000) },
-  { id: 'even-unequal-shots', title: 'Pairs of equal devices, two standard errors apart, 300 to 20,000 shots', offsets: ten((i) => -2 * Math.floor(i / 2)), shots: ten((i) => UNEQUAL[(i * 7) % 10]!) },
+  { id: 'even-unequal-shots', title: 'Pairs of equal devices, two standard errors apart, 300 to 20,000 shots', offsets: ten((i) => 0 - 2 * Math.floor(i / 2)), shots: ten((i) => UNEQUAL[(i * 7) % 10]!) },
 ];
