@@ -31,12 +31,12 @@ const itemsOf = async (em: EntityManager, from: number, to: number): Promise<Fee
     [from, to],
   )).map(itemOf);
 
-/** The current feed, or one of its archive pages: events in the order of the log. */
-export const readFeed = async (em: EntityManager, archive: number | null, registry: string): Promise<string> => {
+/** The current feed, or one of its archive pages of so many events: in the order of the log. */
+export const readFeed = async (em: EntityManager, archive: number | null, registry: string, onPage = feedPage): Promise<string> => {
   const [size] = await runSql<{ size: number }>(em, 'select size from log_size');
   const total = size?.size ?? 0;
-  const archives = Math.floor(total / feedPage);
+  const archives = Math.floor(total / onPage);
   if (archive !== null && archive >= archives) throw new AppError('not-found', `The feed has ${archives} full pages, counted from 0; ${archive} is not among them.`);
-  const [from, to] = archive === null ? [Math.max(0, total - feedPage), total] : [archive * feedPage, (archive + 1) * feedPage];
+  const [from, to] = archive === null ? [Math.max(0, total - onPage), total] : [archive * onPage, (archive + 1) * onPage];
   return writeFeed({ registry, archive, archives, items: await itemsOf(em, from, to) });
 };

@@ -5,6 +5,7 @@ import { join } from 'node:path';
 import { JSDOM } from 'jsdom';
 import { SaxesParser } from 'saxes';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { readFeed } from '#api/modules/landing/feed.ts';
 import { feedPage } from '#shared/landing/feed.ts';
 import { accepted, withdrawn } from '#tests/support/life.ts';
 import { checkLandingPages, type Answer } from '#tests/support/landing-checker.ts';
@@ -141,6 +142,29 @@ describe('the feed', () => {
     expect(text).not.toContain('prev-archive');
     expect((await get('/feed/0.atom')).status).toBe(404);
     expect(feedPage).toBeGreaterThan(ids.length);
+  });
+});
+
+describe('the archive pages of the feed', () => {
+  const ids = (text: string): string[] => [...text.matchAll(/<id>([^<]*#[a-z]+)<\/id>/g)].map(([, id = '']) => id);
+  const linkIn = (text: string, rel: string): string | null => new RegExp(`rel="${rel}"[^>]*href="([^"]*)"`).exec(text)?.[1] ?? null;
+  const read = (archive: number | null, onPage: number) => readFeed(app().deps.orm.em.fork(), archive, registry, onPage);
+
+  it.each([1, 2, 3, 4, 6])('of %i events each lead from the feed to the oldest and leave out no event (RFC 5005)', async (onPage) => {
+    const all = ids(await read(null, 1000));
+    expect(all).toHaveLength(6);
+    let text = await read(null, onPage);
+    const seen = new Set(ids(text));
+    const pages: string[] = [];
+    for (let before = linkIn(text, 'prev-archive'); before !== null; before = linkIn(text, 'prev-archive')) {
+      pages.push(before);
+      text = await read(Number(/feed\/(\d+)\.atom$/.exec(before)?.[1]), onPage);
+      expect(tagsOf(text)).toContain('fh:archive');
+      expect([ids(text).length, linkIn(text, 'current')]).toEqual([onPage, `${registry}/feed.atom`]);
+      for (const id of ids(text)) seen.add(id);
+    }
+    expect(pages).toEqual(Array.from({ length: Math.floor(6 / onPage) }, (_, i) => `${registry}/feed/${Math.floor(6 / onPage) - 1 - i}.atom`));
+    expect([...seen].sort()).toEqual([...all].sort());
   });
 });
 
