@@ -16,8 +16,9 @@ import { runSheetRoutes } from './modules/run-sheets/routes.ts';
 import { sessionRoutes } from './modules/session/routes.ts';
 import { submissionRoutes } from './modules/submissions/routes.ts';
 import { tokenRoutes } from './modules/tokens/routes.ts';
+import { withdrawalRoutes } from './modules/withdrawals/routes.ts';
 
 /** Every route of the API. A route that is not in this list does not exist; one in it has a rule. */
 export const routes: readonly Route[] = [
-  ...healthRoutes, ...sessionRoutes, ...gateClassRoutes, ...boardRoutes, ...entryRoutes, ...citationRoutes, ...landingRoutes, ...deviceRoutes, ...runSheetRoutes, ...submissionRoutes, ...reviewRoutes, ...opinionRoutes, ...tokenRoutes, ...logRoutes, ...methodRoutes, ...campaignRoutes, ...officeRoutes,
+  ...healthRoutes, ...sessionRoutes, ...gateClassRoutes, ...boardRoutes, ...entryRoutes, ...citationRoutes, ...landingRoutes, ...deviceRoutes, ...runSheetRoutes, ...submissionRoutes, ...reviewRoutes, ...opinionRoutes, ...tokenRoutes, ...logRoutes, ...withdrawalRoutes, ...methodRoutes, ...campaignRoutes, ...officeRoutes,
 ];

@@ -21,6 +21,7 @@ begin
   return null;
 end $$`,
       `create trigger entry_state_told after insert on entry_state for each row when (new.state in ('superseded', 'withdrawn')) execute function tell_agency_again()`,
+      'alter table entry_state enable always trigger entry_state_told',
     ];
     for (const statement of statements) this.addSql(statement);
   }

@@ -6,6 +6,7 @@ import { Migration0004SecondOpinions } from './0004-second-opinions.ts';
 import { Migration0005MethodCampaigns } from './0005-method-campaigns.ts';
 import { Migration0006Log } from './0006-log.ts';
 import { Migration0007DoiOutbox } from './0007-doi-outbox.ts';
+import { Migration0008Withdrawals } from './0008-withdrawals.ts';
 
 /** Every migration in order, listed by hand so that a bundle needs no folder scan. A released one is never edited. */
 export const migrations: MigrationObject[] = [
@@ -16,4 +17,5 @@ export const migrations: MigrationObject[] = [
   { name: '0005-method-campaigns', class: Migration0005MethodCampaigns },
   { name: '0006-log', class: Migration0006Log },
   { name: '0007-doi-outbox', class: Migration0007DoiOutbox },
+  { name: '0008-withdrawals', class: Migration0008Withdrawals },
 ];

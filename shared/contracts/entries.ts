@@ -66,6 +66,8 @@ export const entry = entryItem.extend({
     reviewedAt: timestamp, reviewNote: z.string(),
   }),
   eligibility: z.array(z.object({ code: z.string(), sentence: z.string(), remedy: z.string() })),
+  /** Why and by whom a withdrawn version was withdrawn; null for all others. */
+  withdrawal: z.object({ reason: z.string(), at: timestamp, decidedBy: z.array(z.string()) }).nullable(),
   versions: z.array(z.object({ version: z.number().int(), frozenAt: timestamp, method: z.string(), state: entryState, headline: figure.nullable() })),
   links: z.object({ dataset: z.string(), result: z.string(), replicates: z.string(), seal: z.string().nullable(), runSheet: z.string().nullable(), archive: z.string(), page: z.string() }),
 });

@@ -11,5 +11,11 @@ export const accessionPattern = /^EVB-\d{6,9}$/;
 export const runSheetPattern = /^RS-\d{6,9}$/;
 export const submissionPattern = /^S-\d{6,9}$/;
 
+/** "EVB-000042.1" taken apart; null for anything else. */
+export const readVersionedAccession = (text: string): { accession: string; version: number } | null => {
+  const [, accession, version] = /^(EVB-\d{6,9})\.([1-9]\d{0,5})$/.exec(text.trim()) ?? [];
+  return accession && version ? { accession, version: Number(version) } : null;
+};
+
 /** The number inside a public name: numberOf('RS-000123') is 123. */
 export const numberOf = (name: string): number => Number(name.slice(name.indexOf('-') + 1));

@@ -2,7 +2,7 @@
 export const pagePatterns = [
   '/', '/find', '/boards', '/boards/:gateClass/:version', '/entries/:accession', '/entries/:accession/v/:n', '/devices', '/devices/:id', '/method', '/log', '/schema', '/problems/:code',
   '/desk', '/desk/run-sheets', '/desk/run-sheets/new', '/desk/run-sheets/:id', '/desk/submissions', '/desk/submissions/new', '/desk/submissions/:id', '/desk/devices', '/desk/tokens',
-  '/review/:id?',
+  '/review/withdrawals', '/review/:id?',
   '/steward', '/steward/campaigns', '/steward/campaigns/:id', '/steward/jobs', '/steward/mail', '/steward/people',
 ] as const;
 

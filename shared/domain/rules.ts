@@ -25,6 +25,8 @@ export interface Rule {
 
 const editable: readonly SubmissionState[] = ['draft', 'checking', 'blocked', 'ready', 'returned'];
 const underReview: readonly SubmissionState[] = ['in-review'];
+/** Public and not withdrawn. */
+const inUse: readonly SubmissionState[] = ['frozen', 'superseded'];
 /** What was sent to a curator once; before that it is the contributor's own affair. */
 const sent: readonly SubmissionState[] = ['in-review', 'returned', 'declined', 'accepted', 'embargoed', 'frozen', 'superseded', 'withdrawn'];
 
@@ -62,6 +64,10 @@ export const rules = {
   'review.claim': { standings: ['curator'], states: underReview },
   'review.release': { standings: ['curator'], states: underReview },
   'review.decide': { standings: ['curator'], states: underReview },
+
+  'withdrawal.list': { standings: ['curator'] },
+  'withdrawal.ask': { standings: ['curator'], states: inUse },
+  'withdrawal.answer': { standings: ['curator'], states: [...inUse, 'withdrawn'] },
 
   'campaign.read': { standings: ['steward'] },
   'campaign.start': { standings: ['steward'] },

@@ -1,13 +1,12 @@
 import type { Submission } from '#api/entities/submission.ts';
-import { runSql } from '#api/lib/run-sql.ts';
-import { inTransaction } from '#api/lib/work.ts';
-import { logEvent } from '#api/modules/log/append.ts';
 import { decide } from '#api/modules/reviews/service.ts';
 import { receiveSubmission, type ReceiveInput } from '#api/modules/submissions/receive.ts';
 import { runEstimate } from '#api/modules/submissions/run-estimate.ts';
 import { changeRecord, findSubmission, sendToReview } from '#api/modules/submissions/service.ts';
+import { answerWithdrawal, askWithdrawal } from '#api/modules/withdrawals/service.ts';
 import type { Dataset } from '#shared/formats/types.ts';
 import { bytesOf, workFor, type Desk } from './record.ts';
+import { makeCurator } from './people.ts';
 import type { TestApp } from './test-app.ts';
 
 export const fewReplicates = 20;
@@ -42,11 +41,9 @@ export const accepted = async (app: TestApp, desk: Desk, dataset: Dataset, more:
 
 export const stateOf = async (app: TestApp, id: string): Promise<Submission['state']> => (await findSubmission(app.deps.orm.em.fork(), id)).state;
 
-/** Puts a public version out of use, with its leaf in the log. */
-export const withdrawn = async (app: TestApp, name: { accession: string; version: number }, reason: string): Promise<void> => {
-  const work = await workFor(app, null);
-  await inTransaction(work, async (tx) => {
-    await runSql(tx.em, `insert into entry_state (accession, version, state, at, reason) values ($1, $2, 'withdrawn', $3, $4)`, [name.accession, name.version, tx.clock.now(), reason]);
-    await logEvent(tx, 'withdrawn', name);
-  });
+/** A public version that one curator asked to withdraw and another confirmed. */
+export const withdrawn = async (app: TestApp, { accession, version }: { accession: string; version: number }, reason: string): Promise<void> => {
+  const [asks, confirms] = [await makeCurator(app.deps.orm.em.fork()), await makeCurator(app.deps.orm.em.fork())];
+  const id = await askWithdrawal(await workFor(app, asks), { accession, version }, { reason, noInterest: true });
+  await answerWithdrawal(await workFor(app, confirms), id, { answer: 'confirm', noInterest: true });
 };

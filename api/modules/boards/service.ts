@@ -92,7 +92,8 @@ export const readBoard = async (em: EntityManager, run: RunInThread, gateClass: 
   const { frozen, method, reading, all } = await judgeEntries(em, gateClass, view, now);
   const order = byEstimate(reading.better);
   const { how, ranks } = await rankEligible(em, run, all.filter(({ reasons }) => reasons.length === 0).map(({ candidate }) => candidate), reading, method);
-  const shown = all.filter(({ row }) => isShown(row, view));
+  // What was withdrawn has left the board; its own page tells why.
+  const shown = all.filter(({ row, candidate }) => candidate.state !== 'withdrawn' && isShown(row, view));
   shown.sort((a, b) => order(a.row.figure.value, b.row.figure.value) || (a.row.accession < b.row.accession ? -1 : 1));
   const providers = new Map(all.map(({ row }) => [row.device.provider.id, row.device.provider]));
   return {

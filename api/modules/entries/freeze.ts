@@ -14,7 +14,7 @@ import { oweDoi } from '#api/modules/citations/owe-doi.ts';
 import { logEvent } from '#api/modules/log/append.ts';
 import { signRecord } from '#api/modules/log/record-signature.ts';
 import { readSheetSeal } from '#api/modules/run-sheets/sheet-store.ts';
-import { embargo, freeze, lift, lockSubmission, supersede } from '#api/modules/submissions/life-cycle.ts';
+import { embargo, freeze, lift, lockSubmission, supersede, withdraw } from '#api/modules/submissions/life-cycle.ts';
 import { presentMessage } from '#api/modules/submissions/presenter.ts';
 
 const dayOf = (instant: Date): string => instant.toISOString().slice(0, 10);
@@ -54,8 +54,8 @@ const copySeal = async (work: Work, name: { accession: string; version: number }
   await runSql(work.em, `insert into entry_bytes (accession, version, kind, bytes, sha256) values ($1, $2, 'seal', $3, $4)`, [name.accession, name.version, bytes, sha256Hex(bytes)]);
 };
 
-const addState = (work: Work, name: { accession: string; version: number }, state: EntryStateRow['state'], reason: string | null = null): void => {
-  work.em.create(EntryStateRow, { ...name, state, at: work.clock.now(), reason, byId: null });
+const addState = (work: Work, name: { accession: string; version: number }, state: EntryStateRow['state'], reason: string | null = null, byId: string | null = null): void => {
+  work.em.create(EntryStateRow, { ...name, state, at: work.clock.now(), reason, byId });
 };
 
 /** The versions before this one give up their place, in the moment in which it becomes public. */
@@ -145,4 +145,11 @@ export const liftEmbargoes = async (work: Work): Promise<number> => {
   let lifted = 0;
   for (const { id } of due) if (await liftEmbargo(work, id)) lifted += 1;
   return lifted;
+};
+
+/** Takes a public version out of use: the page, the result and the proof stay, the data does not. The caller has two curators' word. */
+export const markWithdrawn = async (work: Work, submission: Submission, { accession, version }: { accession: string; version: number }, reason: string, by: string): Promise<void> => {
+  addState(work, { accession, version }, 'withdrawn', reason, by);
+  await withdraw(work, submission, reason);
+  await logEvent(work, 'withdrawn', { accession, version });
 };

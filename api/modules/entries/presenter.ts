@@ -60,7 +60,7 @@ const provenanceOf = (row: EntryVersion): Entry['provenance'] => ({
 });
 
 /** A version's page. `versions`: all public versions of the accession, newest first. */
-export const presentEntry = (shown: FrozenVersion, versions: readonly FrozenVersion[], eligibility: Reason[]): Entry => {
+export const presentEntry = (shown: FrozenVersion, versions: readonly FrozenVersion[], eligibility: Reason[], withdrawal: Entry['withdrawal']): Entry => {
   const { row, accession, version } = shown;
   const api = `/api/v1/entries/${accession}/v/${version}`;
   const { summary } = row;
@@ -81,6 +81,7 @@ export const presentEntry = (shown: FrozenVersion, versions: readonly FrozenVers
     sealedPoints: row.sealedPoints,
     provenance: provenanceOf(row),
     eligibility,
+    withdrawal,
     versions: versions.map((v) => ({ version: v.version, frozenAt: v.frozenAt.toISOString(), method: v.row.method, state: v.state, headline: headlineOf(v.row.summary.figures, v.row.register.length) })),
     links: { dataset: `${api}/dataset`, result: `${api}/result`, replicates: `${api}/replicates`, seal: row.sealed ? `${api}/seal` : null, runSheet: row.runSheetId ? `${api}/run-sheet` : null, archive: `${api}/archive`, page: `/entries/${accession}/v/${version}` },
   };

@@ -13,6 +13,18 @@ import { versionsWith, type PublicVersion } from './public-entries.ts';
 
 const candidate = (v: FrozenVersion): Candidate => ({ ...v, row: { ...v.row, device: { id: v.row.device.id } } });
 
+/** Reason, day and the two curators of a withdrawal. */
+const withdrawalOf = async (em: EntityManager, { accession, version }: PublicVersion): Promise<Entry['withdrawal']> => {
+  const [row] = await runSql<{ reason: string; at: string; asked: string; confirmed: string }>(
+    em,
+    `select w.reason, a.answered_at as at, asker.name as asked, answerer.name as confirmed
+       from withdrawal w join withdrawal_answer a on a.withdrawal_id = w.id join app_user asker on asker.id = w.asked_by_id join app_user answerer on answerer.id = a.answered_by_id
+      where w.accession = $1 and w.version = $2 and a.answer = 'confirmed'`,
+    [accession, version],
+  );
+  return row ? { reason: row.reason, at: new Date(row.at).toISOString(), decidedBy: [row.asked, row.confirmed] } : null;
+};
+
 /** The page of one version, or of the latest where none is named. */
 export const readEntry = async (em: EntityManager, accession: string, version: number | null): Promise<Entry> => {
   const versions = await requireVersions(em, accession);
@@ -23,7 +35,7 @@ export const readEntry = async (em: EntityManager, accession: string, version: n
   const ofDevice = (await versionsWith(em, 'device_id', shown.row.device.id)).filter((v) => v.accession !== accession);
   const rivals = (await withRows(em, ofDevice)).filter((v) => v.row.gateClass === shown.row.gateClass);
   const reasons = reasonsAgainst(candidate(shown), [...rows, ...rivals].map(candidate), pageReading);
-  return presentEntry(shown, rows, reasons);
+  return presentEntry(shown, rows, reasons, shown.state === 'withdrawn' ? await withdrawalOf(em, shown) : null);
 };
 
 export type StoredKind = 'dataset' | 'result' | 'replicates' | 'seal' | 'run-sheet';

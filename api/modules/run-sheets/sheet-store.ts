@@ -9,7 +9,7 @@ export const readSheet = async (em: EntityManager, id: string): Promise<SheetFil
 };
 
 /**
- * The opened seal of a sheet. For the worker's estimate and for freezing only: a test holds that no other module
+ * The opened seal of a sheet. For the worker's estimate and second opinions, for freezing and for the scrub only: a test holds that no other module
  * imports this, and no route answers with it before an entry is public.
  */
 export const readSheetSeal = async (em: EntityManager, id: string): Promise<Seal | null> => {

@@ -1,7 +1,9 @@
 import { canonicalJson, contentIdOf, sha256Hex } from '#shared/formats/canonical-json.ts';
 import type { RunSheet, Seal } from '#shared/formats/types.ts';
 import { checkSeal } from '#shared/runsheet/seal.ts';
+import { versionedAccessionOf } from '#shared/domain/ids.ts';
 import { runSql } from '#api/lib/run-sql.ts';
+import { readSheetSeal } from '#api/modules/run-sheets/sheet-store.ts';
 import type { Finding, ScrubCheck } from './finding.ts';
 
 interface SheetRow {
@@ -27,17 +29,21 @@ export const checkSheets: ScrubCheck = async ({ em }) => {
   const ids = await runSql<{ id: string }>(em, `select id from run_sheet where state = 'drawn' order by id`);
   const findings: Finding[] = [];
   for (const { id } of ids) {
-    const [row] = await runSql<SheetRow>(em, 'select f.*, s.sheet_sha256, x.seal from run_sheet_file f join run_sheet s on s.id = f.run_sheet_id left join run_sheet_secret x using (run_sheet_id) where f.run_sheet_id = $1', [id]);
-    findings.push(...(row ? sheetFindings(row) : [{ where: id, sentence: 'Its file is missing.' }]));
+    const [row] = await runSql<Omit<SheetRow, 'seal'>>(em, 'select f.*, s.sheet_sha256 from run_sheet_file f join run_sheet s on s.id = f.run_sheet_id where f.run_sheet_id = $1', [id]);
+    findings.push(...(row ? sheetFindings({ ...row, seal: await readSheetSeal(em, id) }) : [{ where: id, sentence: 'Its file is missing.' }]));
   }
   return { looked: ids.length, findings };
 };
 
 /** The seal that went into a frozen version is the one of its sheet. */
 export const checkRevealedSeals: ScrubCheck = async ({ em }) => {
-  const rows = await runSql<{ accession: string; version: number; bytes: Buffer; seal: Seal | null }>(em, `
-    select b.accession, b.version, b.bytes, x.seal from entry_bytes b join entry_version v using (accession, version) left join run_sheet_secret x on x.run_sheet_id = v.run_sheet_id where b.kind = 'seal' order by 1, 2`);
-  const findings = rows.filter((row) => !row.seal || canonicalJson(row.seal) !== row.bytes.toString('utf8')).map((row) => ({ where: `${row.accession}.${row.version}`, sentence: 'Its seal is not the seal of its run sheet.' }));
+  const rows = await runSql<{ accession: string; version: number; bytes: Buffer; run_sheet_id: string | null }>(em, `
+    select b.accession, b.version, b.bytes, v.run_sheet_id from entry_bytes b join entry_version v using (accession, version) where b.kind = 'seal' order by 1, 2`);
+  const findings: Finding[] = [];
+  for (const row of rows) {
+    const seal = row.run_sheet_id === null ? null : await readSheetSeal(em, row.run_sheet_id);
+    if (!seal || canonicalJson(seal) !== row.bytes.toString('utf8')) findings.push({ where: versionedAccessionOf(row.accession, row.version), sentence: 'Its seal is not the seal of its run sheet.' });
+  }
   return { looked: rows.length, findings };
 };
 

@@ -57,4 +57,5 @@ export const embargo = (work: Work, s: Submission) => step(work, s, 'embargo');
 export const freeze = (work: Work, s: Submission) => step(work, s, 'freeze');
 export const lift = (work: Work, s: Submission) => step(work, s, 'lift');
 export const supersede = (work: Work, s: Submission, reason: string) => step(work, s, 'supersede', { reason });
+export const withdraw = (work: Work, s: Submission, reason: string) => step(work, s, 'withdraw', { reason });
 export const cancel = (work: Work, s: Submission) => step(work, s, 'cancel');

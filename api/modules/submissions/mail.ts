@@ -30,6 +30,7 @@ const letters: Partial<Record<Move, Letter>> = {
   embargo: { to: toContributor, subject: (s) => `${versionOf(s)} is under embargo`, body: (s) => `"${s.title}" is kept as ${versionOf(s)} and becomes public on ${s.embargoUntil}.` },
   freeze: { to: toContributor, subject: (s) => `${versionOf(s)} is frozen and public`, body: (s) => `"${s.title}" is public as ${versionOf(s)} and will not change.` },
   lift: { to: toContributor, subject: (s) => `${versionOf(s)} is public`, body: (s) => `The embargo on "${s.title}" has ended. It is public as ${versionOf(s)} and will not change.` },
+  withdraw: { to: toContributor, subject: (s) => `${versionOf(s)} was withdrawn`, body: (s, reason) => `Two curators withdrew ${versionOf(s)}, "${s.title}", for this reason, which its page shows:${because(reason)}\n\nThe page, the result and the proof stay; the dataset is no longer handed out.` },
   cancel: { to: toClaimant, subject: (s) => `${s.id} was cancelled`, body: (s) => `The contributor cancelled "${s.title}", which you had taken for review.` },
 };
 

@@ -29,7 +29,10 @@ export const deskRoutes = (page: PageOf): RouteObject[] => [
   {
     path: 'review',
     lazy: page(() => import('./routes/review/layout.tsx')),
-    children: [{ path: ':id?', lazy: page(() => import('./routes/review/desk.tsx')) }],
+    children: [
+      { path: 'withdrawals', lazy: page(() => import('./routes/review/withdrawals.tsx')) },
+      { path: ':id?', lazy: page(() => import('./routes/review/desk.tsx')) },
+    ],
   },
   {
     path: 'steward',

@@ -30,7 +30,7 @@ const as = async (url: string, sql: string): Promise<unknown[]> => {
 const recordTables: [table: string, column: string][] = [
   ['device', 'name'], ['run_sheet_file', 'bytes'], ['run_sheet_secret', 'seal'], ['submission_file', 'bytes'], ['submission_estimate', 'result'], ['submission_move', 'state'], ['submission_message', 'body'],
   ['decision', 'reason'], ['entry', 'gate_class'], ['entry_version', 'summary'], ['entry_bytes', 'bytes'], ['entry_state', 'state'],
-  ['log_leaf', 'hash'], ['log_node', 'hash'], ['log_head', 'root_hash'], ['record_signature', 'signature'],
+  ['log_leaf', 'hash'], ['log_node', 'hash'], ['log_head', 'root_hash'], ['record_signature', 'signature'], ['withdrawal', 'reason'], ['withdrawal_answer', 'note'],
 ];
 
 describe('what is frozen', () => {
@@ -38,6 +38,7 @@ describe('what is frozen', () => {
     const id = await inReview(app(), desk, makeDataset(desk, await makeDrawnSheet(app(), desk)));
     await desk.client('post', `/api/v1/submissions/${id}/messages`).send({ body: 'For the record.' });
     await decide(await workFor(app(), desk.curator), id, { outcome: 'accept', reason: 'Sound.', noInterest: true });
+    await withdrawn(app(), await accepted(app(), desk, makeDataset(desk, null)), 'the wrong qubit was recorded');
   });
 
   it.each(recordTables)('%s refuses UPDATE, DELETE and TRUNCATE to the application by grant and to the owner by trigger', async (table, column) => {
@@ -148,12 +149,12 @@ describe('a correction', () => {
     const second = await accepted(app(), desk, makeDataset(desk, sheet, { acquisition }), { correctionOf: first.accession, replicates: 200 });
     expect(second).toMatchObject({ accession: first.accession, version: 2 });
     expect([await stateOf(app(), first.id), await stateOf(app(), second.id)]).toEqual(['superseded', 'frozen']);
-    const latest = (await reader('get', `/api/v1/entries/${first.accession}`)).body as { version: number; versions: unknown[]; eligibility: unknown[] };
-    expect(latest).toMatchObject({ version: 2, eligibility: [], versions: [{ version: 2, state: 'frozen' }, { version: 1, state: 'superseded' }] });
+    const latest = (await reader('get', `/api/v1/entries/${first.accession}`)).body as { version: number; versions: unknown[]; eligibility: { code: string }[] };
+    expect(latest).toMatchObject({ version: 2, versions: [{ version: 2, state: 'frozen' }, { version: 1, state: 'superseded' }] });
+    expect(latest.eligibility.map((r) => r.code), 'whatever chance did to the sealed check').not.toContain('newer');
     const old = (await reader('get', `/api/v1/entries/${first.accession}/v/1`)).body as { eligibility: { code: string; sentence: string }[] };
     expect(old).toMatchObject({ version: 1, state: 'superseded' });
-    expect(old.eligibility.map((r) => r.code)).toEqual(['newer']);
-    expect(old.eligibility[0]?.sentence).toContain(`${first.accession}.2`);
+    expect(old.eligibility.find((r) => r.code === 'newer')?.sentence).toContain(`${first.accession}.2`);
   });
 });
 

@@ -103,10 +103,10 @@ describe('a run sheet', () => {
 });
 
 describe('the secret of a seal', () => {
-  it('is read by the estimate, by second opinions and by freezing only, and its table is named in one module', () => {
+  it('is read by the estimate, by second opinions, by freezing and by the scrub only, and its table is named in one module', () => {
     const files = (readdirSync('api', { recursive: true, encoding: 'utf8' })).filter((f) => f.endsWith('.ts')).map((f) => ({ f, text: readFileSync(`api/${f}`, 'utf8') }));
     const naming = (word: string, but: RegExp): string[] => files.filter(({ f, text }) => text.includes(word) && !but.test(f)).map(({ f }) => f).sort();
-    expect(naming('readSheetSeal', /sheet-store\.ts$/)).toEqual(['modules/entries/freeze.ts', 'modules/opinions/make-opinions.ts', 'modules/submissions/run-estimate.ts']);
+    expect(naming('readSheetSeal', /sheet-store\.ts$/)).toEqual(['modules/entries/freeze.ts', 'modules/opinions/make-opinions.ts', 'modules/scrub/check-files.ts', 'modules/submissions/run-estimate.ts']);
     expect(naming('run_sheet_secret', /migrations\//)).toEqual(['modules/run-sheets/draw.ts', 'modules/run-sheets/sheet-store.ts']);
     expect(gateClassById('quarter-turn-1q/1')?.ranked).toBe(true);
   });

@@ -14,7 +14,7 @@ export function Component() {
     <SignedIn query={person} title="Review">
       {(me) => (me.curator ? (
         <>
-          <DeskBar items={[{ to: '/review', label: 'Queue' }]}><span className="org">Curator</span></DeskBar>
+          <DeskBar items={[{ to: '/review', label: 'Queue', end: true }, { to: '/review/withdrawals', label: 'Withdrawals' }]}><span className="org">Curator</span></DeskBar>
           <Outlet />
         </>
       ) : (

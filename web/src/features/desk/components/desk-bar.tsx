@@ -5,6 +5,8 @@ import type { Organisation } from '../organisation.ts';
 export interface DeskItem {
   to: string;
   label: string;
+  /** Marked only at this very address. */
+  end?: boolean;
 }
 
 export const contributorItems: readonly DeskItem[] = [
@@ -19,7 +21,7 @@ export function DeskBar({ items, children }: { items: readonly DeskItem[]; child
   return (
     <nav className="deskbar" aria-label="Your work">
       <div className="wrap">
-        <ul>{items.map((item) => <li key={item.to}><NavLink to={item.to}>{item.label}</NavLink></li>)}</ul>
+        <ul>{items.map((item) => <li key={item.to}><NavLink to={item.to} {...(item.end ? { end: true } : {})}>{item.label}</NavLink></li>)}</ul>
         {children}
       </div>
     </nav>

@@ -29,7 +29,7 @@ const merged = (found: readonly FigureDomain[]): FigureDomain[] => {
 /** The domain of every figure of a class: a row for each range of shots, and one for a figure that was shown to hold nowhere. */
 export const domainRows = (domains: readonly FigureDomain[], study: Pick<CoverageStudy, 'cells'>, gateClass: string, studied: string): DomainRow[] => {
   const names = new Map(study.cells.filter((c) => c.gateClass === studied).flatMap((c) => c.figures).filter((f) => f.key !== 'prediction').map((f) => [`${f.key} ${f.depth}`, f] as const));
-  return [...names].flatMap(([name, { key, depth }]) => {
+  return [...names].flatMap(([name, { key, depth }]): DomainRow[] => {
     const figure = key === 'prediction' ? '' : figureName({ key, depth, gate: null });
     const found = domains.filter((d) => d.gateClass === gateClass && d.key === key && d.depth === depth);
     if (found.length === 0) return [{ key: name, figure, shots: 'any', loss: null }];
