@@ -3,8 +3,8 @@ import { wilsonInterval, Z_99 } from '#shared/stats/wilson.ts';
 /** Coverage that is accepted of a nominal 95 % interval. */
 export const ACCEPTED = { from: 0.93, to: 0.97 } as const;
 
-/** Fewer trials than this are no evidence either way; so few tell only a gross failure, coverage below about 80 %. */
-export const LEAST_TRIALS = 30;
+/** Fewer trials than this are no evidence either way; a hundred tell only a gross failure, coverage below about 87 %. */
+export const LEAST_TRIALS = 100;
 
 /** The 99 % Wilson interval of a coverage, from counts. */
 export const coverageInterval = (inside: number, trials: number): { low: number; high: number } => wilsonInterval(inside, trials, Z_99);
