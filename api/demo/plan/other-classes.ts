@@ -17,7 +17,7 @@ export const otherClasses: readonly Story[] = [
   story({ gateClass: pair, device: 'Tarn-1', day: '2026-05-11', title: 'Second and third ion' }),
   story({ gateClass: halfTurn, device: 'Quill-7', day: '2026-05-25', title: 'Half turns on q11' }),
   story({ gateClass: pair, device: 'Meadow-5', day: '2026-06-08', title: 'Pair q2 and q3', exchange: 9 }),
-  story({ gateClass: cliffordT, device: 'Lantern-2', day: '2026-07-06', title: 'Clifford and T on mode 1', shots: 2000 }),
+  story({ gateClass: cliffordT, device: 'Lantern-2', day: '2026-07-06', title: 'Clifford and T on mode 1' }),
   story({ gateClass: pair, device: 'Sedge-3', day: '2026-07-20', title: 'First and second dot' }),
   story({ gateClass: pair, device: 'Quill-7', day: '2026-08-17', title: 'Pair q11 and q12' }),
   story({ gateClass: chainedTwo, device: 'Meadow-5', day: '2026-06-22', title: 'q2 and q3 as a register' }),

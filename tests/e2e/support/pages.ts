@@ -66,6 +66,7 @@ const submissionPage = (state: SubmissionState): PageToVisit => {
 const reviewPages: readonly PageToVisit[] = [
   fixed('review', '/review', asCurator),
   { name: 'review-case', path: ({ cases }) => `/review/${cases[0] ?? ''}`, ...asCurator },
+  fixed('withdrawals', '/review/withdrawals', asCurator),
   fixed('review-missing', '/review/S-999999', { ...asCurator, refusals: true }),
   fixed('desk-curator', '/desk', asCurator),
 ];
