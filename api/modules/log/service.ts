@@ -8,7 +8,8 @@ import { runSql } from '#api/lib/run-sql.ts';
 import { requireVersion } from '#api/modules/entries/load.ts';
 import { hashesOf } from './nodes.ts';
 
-interface HeadRow {
+/** A head as it is stored. */
+export interface HeadRow {
   tree_size: number;
   root_hash: string;
   at: string;

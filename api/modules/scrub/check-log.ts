@@ -6,6 +6,7 @@ import type { LogLeaf } from '#shared/contracts/log.ts';
 import { runSql } from '#api/lib/run-sql.ts';
 import { toHex } from '#api/modules/log/nodes.ts';
 import { isSignedBy } from '#api/modules/log/record-signature.ts';
+import type { HeadRow } from '#api/modules/log/service.ts';
 import type { Finding, ScrubCheck } from './finding.ts';
 
 interface LeafRow {
@@ -16,15 +17,6 @@ interface LeafRow {
   data: Buffer;
   hash: string;
   frozen: Pick<LogLeaf, 'contentId' | 'bytesSha256' | 'resultSha256' | 'replicatesSha256' | 'method'> | null;
-}
-
-interface HeadRow {
-  tree_size: number;
-  root_hash: string;
-  at: string;
-  signature: string;
-  key_id: string;
-  public_key: string;
 }
 
 const keyOf = ({ level, index }: FullNode): string => `${level}/${index}`;

@@ -1,4 +1,3 @@
-import { spawn } from 'node:child_process';
 import pg from 'pg';
 import { afterEach, describe, expect, it, vi } from 'vitest';
 import { Submission } from '#api/entities/submission.ts';
@@ -9,10 +8,10 @@ import { gateClassById } from '#shared/domain/gate-classes.ts';
 import { canonicalJson, contentIdOf } from '#shared/formats/canonical-json.ts';
 import { estimate } from '#shared/method/estimate.ts';
 import { readSheetSeal } from '#api/modules/run-sheets/sheet-store.ts';
-import { testLogKey } from '#tests/support/log-key.ts';
 import { makeDataset, makeDesk, makeDrawnSheet } from '#tests/support/record.ts';
 import { receive } from '#tests/support/life.ts';
 import { useTestApp } from '#tests/support/test-app.ts';
+import { startWorkerProcess } from '#tests/support/worker-process.ts';
 
 const app = useTestApp({ faultsExpected: true });
 const em = () => app().deps.orm.em.fork();
@@ -24,16 +23,6 @@ afterEach(async () => {
   await worker?.stop();
   worker = undefined;
 });
-
-/** A worker process as `npm start` starts it. */
-const startProcess = (): ReturnType<typeof spawn> =>
-  spawn(process.execPath, ['--import', 'tsx', '--disable-warning=DeprecationWarning', 'api/worker.ts'], {
-    stdio: 'ignore',
-    env: {
-      ...process.env, NODE_ENV: 'test', DATABASE_URL: app().database.url, SESSION_SECRET: 'a secret for tests only, long enough', LOG_SIGNING_KEY: testLogKey, GOOGLE_CLIENT_ID: 'x', GOOGLE_CLIENT_SECRET: 'x',
-      GOOGLE_AUTHORIZATION_URL: 'http://127.0.0.1:9/authorize', GOOGLE_TOKEN_URL: 'http://127.0.0.1:9/token', GOOGLE_USERINFO_URL: 'http://127.0.0.1:9/userinfo', SMTP_URL: 'smtp://127.0.0.1:9', LOG_LEVEL: 'silent', WORKER_THREADS: '1',
-    },
-  });
 
 const held = 4711;
 
@@ -63,7 +52,7 @@ describe('the estimate job', () => {
     const id = await receive(app(), desk, dataset, { replicates });
 
     const letWrite = await holdAfterFirstReplicates();
-    const process = startProcess();
+    const process = startWorkerProcess(app().database.url);
     await vi.waitFor(async () => expect((await row(id)).replicatesDone).toBeGreaterThan(0), soon);
     process.kill('SIGKILL');
     await new Promise((resolve) => process.once('exit', resolve));

@@ -1,4 +1,3 @@
-import { spawn } from 'node:child_process';
 import pg from 'pg';
 import { afterEach, describe, expect, it, vi } from 'vitest';
 import { SecondOpinion } from '#api/entities/second-opinion.ts';
@@ -9,8 +8,8 @@ import { opinionMethods } from '#shared/opinions/types.ts';
 import type { Dataset } from '#shared/formats/types.ts';
 import { estimated } from '#tests/support/life.ts';
 import { makeDataset, makeDesk, makeDrawnSheet, workFor, type Desk } from '#tests/support/record.ts';
-import { testLogKey } from '#tests/support/log-key.ts';
 import { useTestApp } from '#tests/support/test-app.ts';
+import { startWorkerProcess } from '#tests/support/worker-process.ts';
 
 const app = useTestApp({ faultsExpected: true });
 const em = () => app().deps.orm.em.fork();
@@ -29,15 +28,6 @@ afterEach(async () => {
   await worker?.stop();
   worker = undefined;
 });
-
-const startProcess = (): ReturnType<typeof spawn> =>
-  spawn(process.execPath, ['--import', 'tsx', '--disable-warning=DeprecationWarning', 'api/worker.ts'], {
-    stdio: 'ignore',
-    env: {
-      ...process.env, NODE_ENV: 'test', DATABASE_URL: app().database.url, SESSION_SECRET: 'a secret for tests only, long enough', LOG_SIGNING_KEY: testLogKey, GOOGLE_CLIENT_ID: 'x', GOOGLE_CLIENT_SECRET: 'x',
-      GOOGLE_AUTHORIZATION_URL: 'http://127.0.0.1:9/authorize', GOOGLE_TOKEN_URL: 'http://127.0.0.1:9/token', GOOGLE_USERINFO_URL: 'http://127.0.0.1:9/userinfo', SMTP_URL: 'smtp://127.0.0.1:9', LOG_LEVEL: 'silent', WORKER_THREADS: '1',
-    },
-  });
 
 const held = 4712;
 
@@ -85,7 +75,7 @@ describe('the opinions job', () => {
     const desk = await makeDesk(app());
     const id = await ready(desk, makeDataset(desk, null));
     const hold = await holdWrites();
-    const child = startProcess();
+    const child = startWorkerProcess(app().database.url);
     await vi.waitFor(async () => expect(await hold.waiting()).toBeGreaterThan(0), soon);
     child.kill('SIGKILL');
     await new Promise((resolve) => child.once('exit', resolve));
