@@ -33,16 +33,20 @@ interface ProportionChartProps {
 }
 
 const head = 34;
+/** Width of a letter of a row's name at the size of the labels, px: somewhat more than the mean. */
+const letter = 6.7;
 const percentAxis = (rows: readonly ProportionRow[], nominal: readonly number[], count: number): Axis => {
   const axis = linearAxis(rows.flatMap((row) => row.marks.flatMap((m) => [m.low, m.high])), { include: [...nominal, 1], count, pad: 0.02 });
   return { ...axis, ticks: axis.ticks.filter((t) => t.value <= 1 + 1e-9).map((t) => ({ ...t, label: formatLevel(t.value) })) };
 };
 
-/** Rows of proportions against what they ought to be. One row a case; on a phone its name stands above it. */
+/** Rows of proportions against what they ought to be. One row a case; its name stands above it where there is no room beside it. */
 export function ProportionChart({ label, rows, nominal, accepted }: ProportionChartProps) {
   const [ref, width] = useElementWidth<HTMLDivElement>(760);
-  const narrow = width < 620;
-  const [left, right] = narrow ? [16, 74] : [250, 96];
+  const names = Math.max(250, ...rows.map((row) => row.label.length * letter + 16));
+  // Names stand above their rows on a phone, and wherever they would take half of the drawing.
+  const narrow = width < 620 || names > width / 2;
+  const [left, right] = narrow ? [16, 74] : [names, 96];
   const rowHeight = narrow ? 42 : 25;
   const plot = Math.max(120, width - left - right);
   const height = head + rows.length * rowHeight + 10;
