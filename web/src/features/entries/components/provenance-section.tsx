@@ -1,3 +1,4 @@
+import { Link } from 'react-router-dom';
 import type { Entry } from '#shared/contracts/entries.ts';
 import { formatDate } from '#shared/domain/format-date.ts';
 import { formatBytes, formatCount, formatNumber, joinWords } from '#shared/domain/format.ts';
@@ -41,6 +42,7 @@ export function ProvenanceSection({ entry }: { entry: Entry }) {
     ...(links.seal ? [{ term: 'Seal', value: <>{file(links.seal, 'seal.json')}; the secret that chose the sealed circuits</> }] : []),
     ...(links.runSheet ? [{ term: 'Run sheet file', value: <><a href={links.runSheet} download>run-sheet.json</a>; the circuits as they were drawn, with the digest of the secret</> }] : []),
     { term: 'Archive', value: <>{file(links.archive, `${entry.accession}.${entry.version}.zip`)}; all of these files with their digests, always the same bytes</> },
+    { term: 'Log', value: <><a href={`/api/v1/entries/${entry.accession}/v/${entry.version}/proof`}>proof.json</a>; shows that this version is a leaf of the <Link to="/log">public log</Link></> },
     { term: 'Content id', value: <span className="hash">{p.contentId}</span> },
     { term: 'SHA-256 of the bytes', value: <span className="hash">{p.bytesSha256}</span> },
     { term: 'SHA-256 of the result', value: <span className="hash">{p.resultSha256}</span> },
