@@ -93,8 +93,11 @@ export const keyboard = (open: Open) => describe('with the keyboard alone', () =
     await page.keyboard.press('Enter');
     await page.getByRole('heading', { level: 1, name: 'Submit a dataset' }).waitFor();
     await settled(page);
+    // Listened for before the walk: the browser must know that it is listened for when the key is pressed.
+    const chosen = page.waitForEvent('filechooser');
     await tabTo(page, 'choose a file');
-    const [chooser] = await Promise.all([page.waitForEvent('filechooser'), page.keyboard.press('Enter')]);
+    await page.keyboard.press('Enter');
+    const chooser = await chosen;
     await chooser.setFiles({ name: 'empty.json', mimeType: 'application/json', buffer: Buffer.from('{}') });
     await page.getByText('Nothing was sent. Mend what the table names and choose the file again.').waitFor();
   });
